@@ -1,0 +1,28 @@
+import type { Case } from './case';
+import { coverBest, readPlan } from './coverBest';
+import type { Plan } from './plan';
+import { coverFaults } from './proof';
+import { reduce, type NotNested, type Reduction } from './reduce';
+
+/** A best plan with the flow it was read from. */
+export interface Solution {
+  readonly reduction: Reduction;
+  /** Residual capacities over the half arcs of the reduction's network. */
+  readonly residual: Int32Array;
+  readonly plan: Plan;
+  /** Faults found in the proof that no plan covers more; empty: proven. */
+  readonly faults: readonly string[];
+}
+
+/** @returns the best plan, or why the case is not a flow */
+export function solve(kase: Case): Solution | NotNested {
+  const reduction = reduce(kase);
+  if ('crossing' in reduction) return reduction;
+  const residual = coverBest(reduction);
+  return {
+    reduction,
+    residual,
+    plan: readPlan(kase, reduction, residual),
+    faults: coverFaults(reduction, residual),
+  };
+}

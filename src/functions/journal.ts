@@ -1,0 +1,38 @@
+import type { Spill } from '../sheet/range';
+import type { Solved } from './solved';
+
+/** What a cell function came to: a table to spill, or #VALUE! with its message. */
+export type Answer =
+  | { readonly kind: 'spill'; readonly spill: Spill }
+  | { readonly kind: 'fault'; readonly message: string };
+
+/** One cell in which a function of ours answered. */
+export interface Call {
+  /** The cell as `Sheet!B4`, or '' where the host does not tell. */
+  readonly address: string;
+  readonly functionId: string;
+  readonly answer: Answer;
+  /** The case behind the answer; null for functions that take no case. */
+  readonly solved: Solved | null;
+}
+
+/** Remembers, for every cell, the last answer of each of our functions in it; the pane reads it. */
+export class Journal {
+  readonly #calls = new Map<string, Call>();
+
+  record(call: Call): void {
+    const key = `${call.functionId} ${call.address}`;
+    this.#calls.delete(key);
+    this.#calls.set(key, call);
+  }
+
+  /** Forgets the calls the test rejects: their cells hold no formula of ours any more. */
+  keepOnly(test: (call: Call) => boolean): void {
+    for (const [key, call] of this.#calls) if (!test(call)) this.#calls.delete(key);
+  }
+
+  /** The calls, oldest answer first. */
+  calls(): readonly Call[] {
+    return [...this.#calls.values()];
+  }
+}

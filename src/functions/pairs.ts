@@ -1,0 +1,22 @@
+import { readGrid } from '../sheet/readGrid';
+import { writeTable } from '../sheet/write';
+import type { RangeFunction } from './declaration';
+
+const COLUMNS = ['Duty', 'Person', 'Rank'];
+
+export const PAIRS: RangeFunction = {
+  id: 'PAIRS',
+  summary: 'A cross table of who may take what (duties down, people across) as a list of pairs, for the other functions to read.',
+  parameters: [
+    {
+      name: 'grid',
+      description:
+        'Duties down, people across; a number is a rank, any other mark means yes, and blank, no or 0 means no.',
+      optional: false,
+    },
+  ],
+  columns: COLUMNS,
+  example: '=DUTY.PAIRS(Inputs!A1:Z50)',
+  ofRanges: ([grid]) =>
+    writeTable(COLUMNS, readGrid(grid ?? []).map(({ duty, person, rank }) => [duty, person, rank ?? '']), 'No pairs'),
+};

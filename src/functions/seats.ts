@@ -1,0 +1,20 @@
+import type { Case, Seat } from '../cover/case';
+import type { Plan } from '../cover/plan';
+
+/** The seats held of each duty, by duty number, its people by name. */
+export function seatsByDuty(kase: Case, plan: Plan): Plan['seats'][number][][] {
+  return groupSeats(plan, kase.duties.length, ({ duty }) => duty);
+}
+
+/** The duty numbers each person holds, by person number, in the order of the duties table. */
+export function dutiesByPerson(kase: Case, plan: Plan): number[][] {
+  return groupSeats(plan, kase.people.length, ({ person }) => person).map((seats) =>
+    seats.map(({ duty }) => duty).sort((a, b) => a - b),
+  );
+}
+
+function groupSeats(plan: Plan, count: number, groupOf: (seat: Seat) => number): Plan['seats'][number][][] {
+  const groups: Plan['seats'][number][][] = Array.from({ length: count }, () => []);
+  for (const seat of plan.seats) groups[groupOf(seat)].push(seat);
+  return groups;
+}

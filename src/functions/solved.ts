@@ -1,0 +1,58 @@
+import type { Case } from '../cover/case';
+import { fingerprint } from '../cover/fingerprint';
+import { solve, type Solution } from '../cover/solve';
+import { usedFeatures } from '../sheet/features';
+import { readCase } from '../sheet/readCase';
+import type { Range } from '../sheet/range';
+import type { Reading } from '../sheet/reading';
+import { crossingMessage, Refusal, refusalOf } from './refusal';
+
+/**
+ * One case with all that is known of it; equal inputs share one. Everything beyond the reading is
+ * worked out when first asked for and then kept.
+ */
+export class Solved {
+  readonly reading: Reading;
+  #solution: Solution | Error | null = null;
+  #fingerprint: string | null = null;
+
+  constructor(ranges: readonly (Range | null)[]) {
+    this.reading = readCase(ranges);
+  }
+
+  /**
+   * The case.
+   * @throws InputFault the first one, where the inputs cannot be read
+   */
+  get case(): Case {
+    if (this.reading.case === null) throw this.reading.faults[0];
+    return this.reading.case;
+  }
+
+  /**
+   * The best plan and its flow.
+   * @throws InputFault like `case`; Refusal where the case needs what is not built yet
+   */
+  get solution(): Solution {
+    this.#solution ??= this.#solve();
+    if (this.#solution instanceof Error) throw this.#solution;
+    return this.#solution;
+  }
+
+  /**
+   * A short text that is equal for equal cases, whatever the order of their rows.
+   * @throws InputFault like `case`
+   */
+  get fingerprint(): string {
+    this.#fingerprint ??= fingerprint(this.case);
+    return this.#fingerprint;
+  }
+
+  #solve(): Solution | Error {
+    const kase = this.case;
+    const refusal = refusalOf(usedFeatures(kase));
+    if (refusal !== null) return refusal;
+    const solution = solve(kase);
+    return 'crossing' in solution ? new Refusal(crossingMessage(kase, solution)) : solution;
+  }
+}

@@ -1,0 +1,32 @@
+import { writeTable } from '../sheet/write';
+import { CASE_PARAMETERS, type CaseFunction } from './declaration';
+import type { Solved } from './solved';
+
+const COLUMNS = ['Item', 'Value'];
+
+export const SUMMARY: CaseFunction = {
+  id: 'SUMMARY',
+  summary: 'The case at a glance: seats needed, covered and uncovered, how the plan was found, and a fingerprint to compare.',
+  parameters: CASE_PARAMETERS,
+  columns: COLUMNS,
+  example: '=DUTY.SUMMARY(Pairs, People, Duties, Rules)',
+  ofCase: summary,
+};
+
+function summary(solved: Solved) {
+  const { plan, faults } = solved.solution;
+  const rows: (readonly [string, string | number])[] = [
+    ['Seats needed', plan.needed],
+    ['Seats covered', plan.covered],
+    ['Seats uncovered', plan.needed - plan.covered],
+    ['People used', plan.heldByPerson.reduce((used, held) => used + (held > 0 ? 1 : 0), 0)],
+    ['Minimums missed', 0],
+    ['Current kept', 'no current plan given'],
+    ['Rank total', 'no ranks given'],
+    ['Method', 'flow'],
+    ['Proven', faults.length === 0 ? 'proven best' : `not proven: ${faults[0]}`],
+    ['Findings', solved.reading.findings.length],
+    ['Fingerprint', solved.fingerprint],
+  ];
+  return writeTable(COLUMNS, rows, '');
+}
