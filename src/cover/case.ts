@@ -24,6 +24,16 @@ export interface Duty extends Label {
   readonly slots: readonly string[];
   /** Keys of the groups it belongs to; more than one where rows given twice disagree. */
   readonly groups: readonly string[];
+  /** When it takes place; more than one where rows given twice disagree, none where no time is given. */
+  readonly times: readonly Interval[];
+  /** How much of a maximum one seat uses: whole, >= 0; 1 where nothing is said. */
+  readonly load: number;
+}
+
+/** Whole minutes since day 0 of the sheet's calendar; end > start. Duties that only touch do not overlap. */
+export interface Interval {
+  readonly start: number;
+  readonly end: number;
 }
 
 /** Someone who can take duties. */
@@ -70,6 +80,9 @@ export interface Limit {
   readonly most: number;
 }
 
+/** What a plan aims at after covering and minimums. */
+export type Aim = 'changes' | 'ranks' | 'evenness';
+
 export interface Case {
   /** In table order; without a duties table in the order of first appearance. */
   readonly duties: readonly Duty[];
@@ -90,9 +103,26 @@ export interface Case {
   readonly away: readonly Away[];
   /** Sorted by label key, then everyone first, then person; each (person, label) once. */
   readonly limits: readonly Limit[];
+  /** Pairs of different duties that one person never holds both of; lower name order first, each once. */
+  readonly clashes: readonly (readonly [number, number])[];
+  /** Pairs of different duties that the same person holds, or nobody; likewise. */
+  readonly together: readonly (readonly [number, number])[];
+  /** The fewest minutes between two duties of one person. */
+  readonly rest: number;
+  /** The plan in force, sorted like pairs, each seat once; null where none was given. */
+  readonly current: readonly Seat[] | null;
+  /** The later aims, best first; all three. */
+  readonly order: readonly Aim[];
+  /** What a remedy costs; null: not allowed. */
+  readonly prices: { readonly place: number | null; readonly eligibility: number | null };
+  /** How long an exact search may take, in seconds. */
+  readonly seconds: number;
   /** For each slot and group key, the label as first written in the duties table. */
   readonly labelNames: ReadonlyMap<string, string>;
 }
 
 /** The priority of a duty that was given none: after every given one (those end at 1,000,000). */
 export const LAST_PRIORITY = 1_000_001;
+
+/** The order of the later aims where no Order rule says otherwise. */
+export const DEFAULT_ORDER: readonly Aim[] = ['changes', 'ranks', 'evenness'];

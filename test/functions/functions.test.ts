@@ -119,9 +119,9 @@ describe('the functions on a small museum', () => {
 });
 
 describe('cases that this version does not answer', () => {
-  it('are refused with the place and the cure, not answered as if the rest were not there', () => {
+  it('are refused with the table and the cure, not answered as if the rest were not there', () => {
     const minimum: Range = [['Person', 'Maximum', 'Minimum'], ['Ada', 2, 1]];
-    expect(rows('ASSIGN', PAIRS, minimum)).toMatch(/^People table, row 2 of the range: .*not taken into account/);
+    expect(rows('ASSIGN', PAIRS, minimum)).toMatch(/^People table: the Minimum column is not taken into account/);
   });
 
   it('name the person and the two limits that cross', () => {

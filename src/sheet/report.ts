@@ -1,0 +1,52 @@
+import { InputFault, type FaultPlace, type Finding, type TableName } from './fault';
+
+/** Findings of one kind in one table that are listed before the rest is only counted. */
+const LISTED = 1000;
+
+const TABLES: readonly TableName[] = ['Pairs', 'People', 'Duties', 'Rules', 'Current', 'Plan', 'Grid'];
+
+/** Collects what is wrong and what is odd while tables are read, in whatever order they are read. */
+export class Report {
+  readonly #faults: InputFault[] = [];
+  readonly #findings: Finding[] = [];
+  readonly #counts = new Map<string, number>();
+
+  fault(place: FaultPlace): void {
+    this.#faults.push(new InputFault(place));
+  }
+
+  find(table: TableName, row: number | null, finding: string, detail: string): void {
+    const kind = `${table} ${finding}`;
+    const count = (this.#counts.get(kind) ?? 0) + 1;
+    this.#counts.set(kind, count);
+    if (count <= LISTED) this.#findings.push({ table, row, finding, detail });
+  }
+
+  /** The faults in the order of the tables, then of the rows. */
+  faults(): InputFault[] {
+    return this.#faults
+      .map((fault) => ({ fault, table: fault.place.table, row: fault.place.row }))
+      .sort(byPlace)
+      .map(({ fault }) => fault);
+  }
+
+  /** The findings in the same order; what was too much to list is counted at the end of its table. */
+  findings(): Finding[] {
+    const all = [...this.#findings];
+    for (const [kind, count] of this.#counts) {
+      if (count <= LISTED) continue;
+      const { table, finding } = all.find((entry) => `${entry.table} ${entry.finding}` === kind)!;
+      all.push({ table, row: Infinity, finding, detail: `And ${count - LISTED} more of this kind.` });
+    }
+    return all.sort(byPlace).map((entry) => (entry.row === Infinity ? { ...entry, row: null } : entry));
+  }
+}
+
+interface Place {
+  readonly table: TableName;
+  readonly row: number | null;
+}
+
+function byPlace(a: Place, b: Place): number {
+  return TABLES.indexOf(a.table) - TABLES.indexOf(b.table) || (a.row ?? 0) - (b.row ?? 0);
+}
