@@ -15,26 +15,36 @@ export function casePairs(
   let worst = -1;
   for (let i = 0; i < kept.count; i++) worst = Math.max(worst, kept.rank[i]);
   const ranked = worst >= 0;
-  const unique = uniqueRows(kept, 'Pairs', duties, people, report);
+  const { sorted, starts } = uniqueRows(kept, 'Pairs', duties, people, report);
+  const count = starts.length - 1;
   const pairs = {
-    count: unique.length,
-    duty: new Int32Array(unique.length),
-    person: new Int32Array(unique.length),
-    rank: new Int32Array(unique.length),
+    count,
+    duty: new Int32Array(count),
+    person: new Int32Array(count),
+    rank: new Int32Array(count),
   };
-  const rankOf = (i: number): number => (kept.rank[i] === NO_RANK ? worst + 1 : kept.rank[i]);
-  unique.forEach((group, k) => {
-    pairs.duty[k] = kept.duty[group[0]];
-    pairs.person[k] = kept.person[group[0]];
-    pairs.rank[k] = ranked ? Math.min(...group.map(rankOf)) : 0;
-  });
+  for (let k = 0; k < count; k++) {
+    pairs.duty[k] = kept.duty[sorted[starts[k]]];
+    pairs.person[k] = kept.person[sorted[starts[k]]];
+    if (!ranked) continue;
+    let best = worst + 1;
+    for (let i = starts[k]; i < starts[k + 1]; i++) {
+      const rank = kept.rank[sorted[i]];
+      if (rank !== NO_RANK) best = Math.min(best, rank);
+    }
+    pairs.rank[k] = best;
+  }
   return { pairs, ranked };
 }
 
 /** The plan in force as seats of the case, sorted, each once. */
 export function caseSeats(rows: PairRows, duties: Directory, people: Directory, report: Report): Seat[] {
   const kept = inCase(rows, duties, people);
-  return uniqueRows(kept, 'Current', duties, people, report).map(([i]) => ({ duty: kept.duty[i], person: kept.person[i] }));
+  const { sorted, starts } = uniqueRows(kept, 'Current', duties, people, report);
+  return Array.from(starts.subarray(0, -1), (start) => {
+    const i = sorted[start];
+    return { duty: kept.duty[i], person: kept.person[i] };
+  });
 }
 
 /** The rows whose duty and person are in the case, with the numbers they have there. */
@@ -59,19 +69,34 @@ function inCase(rows: PairRows, duties: Directory, people: Directory): PairRows 
   return kept;
 }
 
-/** Sorted rows, those of one duty and person together; what is repeated is found. */
-function uniqueRows(rows: PairRows, table: TableName, duties: Directory, people: Directory, report: Report): number[][] {
-  const groups: number[][] = [];
-  for (const i of sortRows(rows, duties.rank, people.rank)) {
-    const group = groups.length > 0 ? groups[groups.length - 1] : null;
-    if (group === null || rows.duty[group[0]] !== rows.duty[i] || rows.person[group[0]] !== rows.person[i]) {
-      groups.push([i]);
-      continue;
+/** Rows in sorted order: those of the k-th pair are sorted[starts[k]] .. sorted[starts[k + 1] - 1]. */
+interface UniqueRows {
+  readonly sorted: Int32Array;
+  readonly starts: Int32Array;
+}
+
+/** Sorts the rows and brings those of one duty and person together; what is repeated is found. */
+function uniqueRows(
+  rows: PairRows,
+  table: TableName,
+  duties: Directory,
+  people: Directory,
+  report: Report,
+): UniqueRows {
+  const sorted = sortRows(rows, duties.rank, people.rank);
+  const starts = new Int32Array(sorted.length + 1);
+  let count = 0;
+  let first = -1;
+  sorted.forEach((i, at) => {
+    if (first === -1 || rows.duty[first] !== rows.duty[i] || rows.person[first] !== rows.person[i]) {
+      starts[count++] = at;
+      first = i;
+      return;
     }
-    group.push(i);
     const duty = duties.names.names[duties.fromCase[rows.duty[i]]];
     const person = people.names.names[people.fromCase[rows.person[i]]];
-    report.find(table, rows.row[i], 'Row given twice', `${duty} with ${person} stands in row ${rows.row[group[0]]} already.`);
-  }
-  return groups;
+    report.find(table, rows.row[i], 'Row given twice', `${duty} with ${person} stands in row ${rows.row[first]} already.`);
+  });
+  starts[count] = sorted.length;
+  return { sorted, starts: starts.subarray(0, count + 1) };
 }

@@ -49,19 +49,19 @@ type SeatOfRow = Seat & { readonly row: number };
 /** True for a rule all of whose names are known; the others are found, with what they may mean. */
 function knownOnly({ duties, people, labels }: Context, report: Report): (rule: Rule) => boolean {
   const listed = ({ names, fromCase }: Directory): string[] => Array.from(fromCase, (number) => names.names[number]);
-  const near = {
-    duty: new NearMisses(listed(duties)),
-    person: new NearMisses(listed(people)),
-    'slot or group': new NearMisses([...labels.values()]),
+  const candidates = {
+    duty: () => listed(duties),
+    person: () => listed(people),
+    'slot or group': () => [...labels.values()],
   };
   return (rule) => {
-    const unknown = (kind: keyof typeof near, text: string): boolean => {
+    const unknown = (kind: keyof typeof candidates, text: string): boolean => {
       const where = kind === 'slot or group' ? 'in the duties table' : `among the ${kind === 'duty' ? 'duties' : 'people'}`;
       report.find(
         'Rules',
         rule.row,
         `Unknown ${kind}`,
-        `${rule.word} has no effect: ${quote(text)} is not ${where}.${near[kind].question(text)}`,
+        `${rule.word} has no effect: ${quote(text)} is not ${where}.${new NearMisses(candidates[kind]()).question(text)}`,
       );
       return false;
     };

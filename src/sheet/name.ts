@@ -2,9 +2,12 @@
 const INVISIBLE = /[\u00AD\u200B-\u200F\u202A-\u202E\u2060-\u2064\u2066-\u206F\uFEFF]/gu;
 const MARKS = /\p{M}/gu;
 const WHITE_SPACE = /\s+/gu;
+/** Most names: printable ASCII with single spaces inside, which needs no cleaning. */
+const PLAIN = /^[!-~]+(?: [!-~]+)*$/u;
 
 /** A name as shown: NFC, no white space at the ends, inner white space as one space. */
 export function cleanName(text: string): string {
+  if (PLAIN.test(text)) return text;
   return text.normalize('NFC').replace(WHITE_SPACE, ' ').trim();
 }
 
@@ -13,6 +16,7 @@ export function cleanName(text: string): string {
  * Folding goes through upper case, so that ß meets SS, and knows no locale.
  */
 export function nameKey(text: string): string {
+  if (PLAIN.test(text)) return text.toLowerCase();
   return cleanName(text.replace(INVISIBLE, '').toUpperCase().toLowerCase());
 }
 
@@ -27,6 +31,7 @@ export function compareKeys(one: string, other: string): number {
 
 /** A key without accents and other marks. */
 export function withoutMarks(key: string): string {
+  if (PLAIN.test(key)) return key;
   return key.normalize('NFD').replace(MARKS, '');
 }
 

@@ -18,6 +18,8 @@ interface Candidate {
 export class NearMisses {
   /** Names with other numbers in them are other duties, not misspelt ones: candidates by their digits. */
   readonly #byDigits = new Map<string, Candidate[]>();
+  /** One name for every text that is left when the digits are taken out of the listed names. */
+  readonly #byWords = new Map<string, string>();
 
   constructor(listed: readonly string[]) {
     for (const name of listed) {
@@ -26,6 +28,8 @@ export class NearMisses {
       const list = this.#byDigits.get(digits) ?? [];
       this.#byDigits.set(digits, list);
       list.push(candidate);
+      const words = withoutDigits(candidate.key);
+      if (digits !== '' && !this.#byWords.has(words)) this.#byWords.set(words, name);
     }
   }
 
@@ -44,10 +48,23 @@ export class NearMisses {
     return found.slice(0, NAMED);
   }
 
+  /** A listed name that differs by its numbers and by slips of the pen elsewhere; null where there is none. */
+  relative(text: string): string | null {
+    const wanted = withoutDigits(nameKey(text));
+    if (digitsOf(nameKey(text)) === '') return null;
+    for (const [words, name] of this.#byWords) {
+      if (Math.abs(words.length - wanted.length) <= 2 && slips(words, wanted) <= farthest(wanted.length)) return name;
+    }
+    return null;
+  }
+
   /** The question to put to whoever typed it: ` Did you mean "A" or "B"?`, or '' where nothing is near. */
   question(text: string): string {
     const names = this.nearest(text).map((name) => `"${name}"`);
-    if (names.length === 0) return '';
+    if (names.length === 0) {
+      const relative = this.relative(text);
+      return relative === null ? '' : ` There is no such name with this number; one like it is "${relative}".`;
+    }
     const last = names.pop()!;
     return ` Did you mean ${names.length > 0 ? `${names.join(', ')} or ` : ''}${last}?`;
   }
@@ -79,6 +96,10 @@ function prepare(name: string): Candidate {
 
 function digitsOf(key: string): string {
   return (key.match(/\p{N}+/gu) ?? []).map((digits) => digits.replace(/^0+(?=.)/u, '')).join(' ');
+}
+
+function withoutDigits(key: string): string {
+  return key.replace(/\p{N}+/gu, '').trim();
 }
 
 /** The most slips of the pen in a name of so many characters. */
