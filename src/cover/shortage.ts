@@ -2,6 +2,7 @@ import type { Case } from './case';
 import { PairState } from './openPairs';
 import type { Plan } from './plan';
 import type { Reduction } from './reduce';
+import type { Solution } from './solve';
 import { components } from '../flow/components';
 import { reachable } from '../flow/residual';
 
@@ -36,7 +37,7 @@ export interface Knot {
 }
 
 /** The short duties in table order. */
-export function shortages(kase: Case, reduction: Reduction, residual: Int32Array, plan: Plan): readonly Shortage[] {
+export function shortages(kase: Case, { reduction, residual, plan }: Solution): readonly Shortage[] {
   const short = kase.duties.flatMap(({ need }, duty) => (plan.heldOfDuty[duty] < need ? [duty] : []));
   if (short.length === 0) return [];
   const counts = countPairs(kase, reduction, new Set(short));

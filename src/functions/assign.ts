@@ -1,9 +1,14 @@
 import { writeTable } from '../sheet/write';
-import { CASE_PARAMETERS, type CaseFunction } from './declaration';
+import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import { seatsByDuty } from './seats';
 import type { Solved } from './solved';
 
-const COLUMNS = ['Duty', 'Person', 'Rank', 'Note'];
+const COLUMNS = [
+  { name: 'Duty', description: 'the duty, in the order of the duties table; one row a seat' },
+  { name: 'Person', description: 'who holds the seat, by name; blank where nobody can' },
+  { name: 'Rank', description: 'the rank of the pair, where the pairs have ranks' },
+  { name: 'Note', description: 'Fixed, where a rule says so; Uncovered, where nobody holds the seat' },
+];
 
 export const ASSIGN: CaseFunction = {
   id: 'ASSIGN',
@@ -23,5 +28,5 @@ function assign(solved: Solved) {
     const open = Array.from({ length: Math.max(0, need - seats.length) }, () => [name, '', '', 'Uncovered']);
     return [...held, ...open];
   });
-  return writeTable(COLUMNS, rows, 'No seats to assign');
+  return writeTable(headings(COLUMNS), rows, 'No seats to assign');
 }

@@ -8,6 +8,17 @@ export interface Parameter {
   readonly optional: boolean;
 }
 
+/** One column of what a function spills. */
+export interface Column {
+  readonly name: string;
+  readonly description: string;
+}
+
+/** The headings of the columns. */
+export function headings(columns: readonly Column[]): string[] {
+  return columns.map(({ name }) => name);
+}
+
 /**
  * A cell function, declared once. functions.json, the registration in every host, the reference
  * page and the pane are derived from this.
@@ -18,8 +29,8 @@ interface Declaration {
   /** What it answers, in one or two sentences; at most 512 characters. */
   readonly summary: string;
   readonly parameters: readonly Parameter[];
-  /** The headings of the first spilled row; GRID, whose headings are people, names only its first. */
-  readonly columns: readonly string[];
+  /** The columns of the spilled table; GRID, whose columns are people, stands for them in one. */
+  readonly columns: readonly Column[];
   /** A formula on the named ranges of the demo workbook. */
   readonly example: string;
 }

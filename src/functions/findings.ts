@@ -1,8 +1,13 @@
 import { writeTable } from '../sheet/write';
-import { CASE_PARAMETERS, type CaseFunction } from './declaration';
+import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import type { Solved } from './solved';
 
-const COLUMNS = ['Table', 'Row', 'Finding', 'Detail'];
+const COLUMNS = [
+  { name: 'Table', description: 'the table' },
+  { name: 'Row', description: 'the row within the range given, its first row being 1' },
+  { name: 'Finding', description: 'what kind of thing it is' },
+  { name: 'Detail', description: 'what was found, with names and numbers, and the likely meaning of a misspelt name' },
+];
 
 export const FINDINGS: CaseFunction = {
   id: 'FINDINGS',
@@ -19,5 +24,5 @@ function findings({ reading }: Solved) {
     ...reading.faults.map(({ place, message }) => [place.table, place.row ?? '', 'Cannot be read', message]),
     ...reading.findings.map(({ table, row, finding, detail }) => [table, row ?? '', finding, detail]),
   ];
-  return writeTable(COLUMNS, rows, 'Nothing odd found');
+  return writeTable(headings(COLUMNS), rows, 'Nothing odd found');
 }

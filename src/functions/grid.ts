@@ -7,11 +7,15 @@ import type { Solved } from './solved';
 const MARK = 'x';
 const TOTAL = 'Total';
 
+const COLUMNS = [
+  { name: 'Duty', description: 'the duties down the first column, people across; a mark where the duty is held, totals on both edges' },
+];
+
 export const GRID: CaseFunction = {
   id: 'GRID',
   summary: 'The plan as a cross table: duties down, people across, a mark where the duty is held, totals on both edges.',
   parameters: CASE_PARAMETERS,
-  columns: ['Duty'],
+  columns: COLUMNS,
   example: '=DUTY.GRID(Pairs, People, Duties, Rules)',
   ofCase: grid,
 };

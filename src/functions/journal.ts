@@ -19,11 +19,22 @@ export interface Call {
 /** Remembers, for every cell, the last answer of each of our functions in it; the pane reads it. */
 export class Journal {
   readonly #calls = new Map<string, Call>();
+  readonly #listeners = new Set<() => void>();
 
   record(call: Call): void {
     const key = `${call.functionId} ${call.address}`;
     this.#calls.delete(key);
     this.#calls.set(key, call);
+    for (const listener of this.#listeners) listener();
+  }
+
+  /**
+   * Calls the listener after every answer; a recalculation may be many.
+   * @returns a function that ends the subscription
+   */
+  onRecord(listener: () => void): () => void {
+    this.#listeners.add(listener);
+    return () => this.#listeners.delete(listener);
   }
 
   /** Forgets the calls the test rejects: their cells hold no formula of ours any more. */

@@ -1,11 +1,20 @@
 import { gains } from '../cover/gains';
 import type { Person } from '../cover/case';
 import { joinNames, writeTable } from '../sheet/write';
-import { CASE_PARAMETERS, type CaseFunction } from './declaration';
+import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import { dutiesByPerson } from './seats';
 import type { Solved } from './solved';
 
-const COLUMNS = ['Person', 'Assigned', 'Minimum', 'Maximum', 'Spare', 'Gain', 'Duties', 'Note'];
+const COLUMNS = [
+  { name: 'Person', description: 'everyone in the people table, in its order, then people who are not listed' },
+  { name: 'Assigned', description: 'seats held' },
+  { name: 'Minimum', description: 'the fewest seats' },
+  { name: 'Maximum', description: 'the most seats' },
+  { name: 'Spare', description: 'places left' },
+  { name: 'Gain', description: 'seats more that could be covered if this person alone took one more' },
+  { name: 'Duties', description: 'what they hold, separated by semicolons' },
+  { name: 'Note', description: 'over the maximum by Fixed rows; not in the people table' },
+];
 
 export const LOADS: CaseFunction = {
   id: 'LOADS',
@@ -29,7 +38,7 @@ function loads(solved: Solved) {
     const duties = joinNames(held[p].map((d) => kase.duties[d].name));
     return [name, assigned, minimum, maximum, spare, gain[p], duties, note(person, assigned)];
   });
-  return writeTable(COLUMNS, rows, 'No people');
+  return writeTable(headings(COLUMNS), rows, 'No people');
 }
 
 function note({ maximum, listed }: Person, assigned: number): string {

@@ -1,8 +1,12 @@
 import { readGrid } from '../sheet/readGrid';
 import { writeTable } from '../sheet/write';
-import type { RangeFunction } from './declaration';
+import { headings, type RangeFunction } from './declaration';
 
-const COLUMNS = ['Duty', 'Person', 'Rank'];
+const COLUMNS = [
+  { name: 'Duty', description: 'from the first column' },
+  { name: 'Person', description: 'from the first row' },
+  { name: 'Rank', description: 'the number in the cell, if it is one' },
+];
 
 export const PAIRS: RangeFunction = {
   id: 'PAIRS',
@@ -18,5 +22,5 @@ export const PAIRS: RangeFunction = {
   columns: COLUMNS,
   example: '=DUTY.PAIRS(Inputs!A1:Z50)',
   ofRanges: ([grid]) =>
-    writeTable(COLUMNS, readGrid(grid ?? []).map(({ duty, person, rank }) => [duty, person, rank ?? '']), 'No pairs'),
+    writeTable(headings(COLUMNS), readGrid(grid ?? []).map(({ duty, person, rank }) => [duty, person, rank ?? '']), 'No pairs'),
 };

@@ -1,5 +1,6 @@
 import type { Case } from '../cover/case';
 import { fingerprint } from '../cover/fingerprint';
+import { shortages, type Shortage } from '../cover/shortage';
 import { solve, type Solution } from '../cover/solve';
 import { usedFeatures } from '../sheet/features';
 import { readCase } from '../sheet/readCase';
@@ -14,6 +15,7 @@ import { crossingMessage, Refusal, refusalOf } from './refusal';
 export class Solved {
   readonly reading: Reading;
   #solution: Solution | Error | null = null;
+  #shortages: readonly Shortage[] | null = null;
   #fingerprint: string | null = null;
 
   constructor(ranges: readonly (Range | null)[]) {
@@ -37,6 +39,15 @@ export class Solved {
     this.#solution ??= this.#solve();
     if (this.#solution instanceof Error) throw this.#solution;
     return this.#solution;
+  }
+
+  /**
+   * The duties that are short in the best plan, in table order.
+   * @throws like `solution`
+   */
+  get shortages(): readonly Shortage[] {
+    this.#shortages ??= shortages(this.case, this.solution);
+    return this.#shortages;
   }
 
   /**

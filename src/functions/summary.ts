@@ -1,8 +1,11 @@
 import { writeTable } from '../sheet/write';
-import { CASE_PARAMETERS, type CaseFunction } from './declaration';
+import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import type { Solved } from './solved';
 
-const COLUMNS = ['Item', 'Value'];
+const COLUMNS = [
+  { name: 'Item', description: 'Seats needed, covered and uncovered; People used; Minimums missed; Current kept; Rank total; Method; Proven; Findings; Fingerprint' },
+  { name: 'Value', description: 'its value; the fingerprint is equal for equal cases, whatever the order of their rows' },
+];
 
 export const SUMMARY: CaseFunction = {
   id: 'SUMMARY',
@@ -28,5 +31,5 @@ function summary(solved: Solved) {
     ['Findings', solved.reading.findings.length],
     ['Fingerprint', solved.fingerprint],
   ];
-  return writeTable(COLUMNS, rows, '');
+  return writeTable(headings(COLUMNS), rows, '');
 }

@@ -1,10 +1,16 @@
-import { shortages } from '../cover/shortage';
 import { writeTable } from '../sheet/write';
-import { CASE_PARAMETERS, type CaseFunction } from './declaration';
+import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import { shortageReason } from './reasons';
 import type { Solved } from './solved';
 
-const COLUMNS = ['Duty', 'Short', 'Need', 'Eligible', 'Bottleneck', 'Reason'];
+const COLUMNS = [
+  { name: 'Duty', description: 'a duty that is short' },
+  { name: 'Short', description: 'seats it lacks' },
+  { name: 'Need', description: 'seats it needs' },
+  { name: 'Eligible', description: 'how many people may take it: listed for it, neither Barred nor Away' },
+  { name: 'Bottleneck', description: 'a number that duties share whose people are all taken by these same duties' },
+  { name: 'Reason', description: 'why, in a sentence' },
+];
 
 export const UNCOVERED: CaseFunction = {
   id: 'UNCOVERED',
@@ -17,11 +23,10 @@ export const UNCOVERED: CaseFunction = {
 
 function uncovered(solved: Solved) {
   const kase = solved.case;
-  const { reduction, residual, plan } = solved.solution;
-  const rows = shortages(kase, reduction, residual, plan).map((shortage) => {
+  const rows = solved.shortages.map((shortage) => {
     const { name, need } = kase.duties[shortage.duty];
     const { short, eligible, knot } = shortage;
     return [name, short, need, eligible, knot?.number ?? '', shortageReason(kase, shortage)];
   });
-  return writeTable(COLUMNS, rows, 'Every seat is covered');
+  return writeTable(headings(COLUMNS), rows, 'Every seat is covered');
 }

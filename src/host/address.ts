@@ -1,0 +1,45 @@
+/** A cell address taken apart. */
+export interface CellAddress {
+  readonly sheet: string;
+  /** The cell as `B4`, without dollar signs. */
+  readonly cell: string;
+}
+
+const QUOTED = /^'((?:[^']|'')+)'!(.+)$/u;
+const PLAIN_SHEET = /^[\p{L}_][\p{L}\p{N}_.]*$/u;
+const CELL_LIKE = /^([a-z]{1,3}\d+|r\d*c\d*)$/iu;
+
+/** Takes `Sheet!B4` or `'My sheet'!B4` apart; null for anything else. */
+export function parseAddress(address: string): CellAddress | null {
+  const quoted = QUOTED.exec(address);
+  if (quoted !== null) return { sheet: quoted[1].replaceAll("''", "'"), cell: plainCell(quoted[2]) };
+  const at = address.lastIndexOf('!');
+  return at <= 0 ? null : { sheet: address.slice(0, at), cell: plainCell(address.slice(at + 1)) };
+}
+
+/** Writes an address as a formula would, the sheet name quoted where it must be. */
+export function formatAddress({ sheet, cell }: CellAddress): string {
+  const plain = PLAIN_SHEET.test(sheet) && !CELL_LIKE.test(sheet);
+  return `${plain ? sheet : `'${sheet.replaceAll("'", "''")}'`}!${cell}`;
+}
+
+/** The letters of a column: 0 is A. */
+export function columnLetters(column: number): string {
+  let letters = '';
+  for (let rest = column + 1; rest > 0; rest = Math.floor((rest - 1) / 26)) {
+    letters = String.fromCharCode(65 + ((rest - 1) % 26)) + letters;
+  }
+  return letters;
+}
+
+/** Column and row of a cell such as `B4`, both from 0; null where it is none. */
+export function parseCell(cell: string): { readonly column: number; readonly row: number } | null {
+  const match = /^([A-Z]{1,3})([1-9]\d*)$/iu.exec(cell);
+  if (match === null) return null;
+  const column = Array.from(match[1].toUpperCase()).reduce((sum, letter) => sum * 26 + letter.charCodeAt(0) - 64, 0);
+  return { column: column - 1, row: Number(match[2]) - 1 };
+}
+
+function plainCell(cell: string): string {
+  return cell.replaceAll('$', '');
+}

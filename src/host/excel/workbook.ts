@@ -1,0 +1,81 @@
+import { parseAddress } from '../address';
+import type { WorkbookPort } from '../port';
+
+/** The pane's view of a workbook in Excel. Asks only for what the Excel at hand supports. */
+export class ExcelWorkbook implements WorkbookPort {
+  readonly kind = 'excel';
+
+  onRecalculated(listener: () => void): () => void {
+    let ended = false;
+    const ends: (() => Promise<void>)[] = [];
+    void Excel.run(async (context) => {
+      const { worksheets } = context.workbook;
+      const tell = (): Promise<void> => {
+        if (!ended) listener();
+        return Promise.resolve();
+      };
+      const handlers: { remove(): void; context: OfficeExtension.ClientRequestContext }[] = [];
+      if (supports('1.9')) handlers.push(worksheets.onChanged.add(tell));
+      if (supports('1.8')) handlers.push(worksheets.onCalculated.add(tell));
+      if (supports('1.7')) handlers.push(worksheets.onDeleted.add(tell));
+      await context.sync();
+      for (const handler of handlers) {
+        ends.push(async () => {
+          handler.remove();
+          await handler.context.sync();
+        });
+      }
+    }).catch(() => undefined);
+    return () => {
+      ended = true;
+      for (const end of ends) void end().catch(() => undefined);
+    };
+  }
+
+  /** Sheets that are gone answer null for their cells. */
+  async formulasAt(addresses: readonly string[]): Promise<readonly (string | null)[]> {
+    if (addresses.length === 0) return [];
+    return Excel.run(async (context) => {
+      const parsed = addresses.map(parseAddress);
+      const names = [...new Set(parsed.flatMap((address) => (address === null ? [] : [address.sheet])))];
+      const sheets = new Map(names.map((name) => [name, context.workbook.worksheets.getItemOrNullObject(name)]));
+      for (const sheet of sheets.values()) sheet.load('isNullObject');
+      await context.sync();
+      const ranges = parsed.map((address) => {
+        const sheet = address === null ? undefined : sheets.get(address.sheet);
+        if (address === null || sheet === undefined || sheet.isNullObject) return null;
+        return sheet.getRange(address.cell).load('formulas');
+      });
+      await context.sync();
+      return ranges.map((range) => {
+        const formula: unknown = range?.formulas[0][0];
+        return typeof formula === 'string' && formula.startsWith('=') ? formula : null;
+      });
+    });
+  }
+
+  async select(address: string): Promise<void> {
+    const parsed = parseAddress(address);
+    if (parsed === null) return;
+    await Excel.run(async (context) => {
+      const sheet = context.workbook.worksheets.getItemOrNullObject(parsed.sheet);
+      sheet.load('isNullObject');
+      await context.sync();
+      if (sheet.isNullObject) return;
+      sheet.activate();
+      sheet.getRange(parsed.cell).select();
+      await context.sync();
+    }).catch(() => undefined);
+  }
+
+  async recalculate(): Promise<void> {
+    await Excel.run(async (context) => {
+      context.workbook.application.calculate(Excel.CalculationType.full);
+      await context.sync();
+    }).catch(() => undefined);
+  }
+}
+
+function supports(version: string): boolean {
+  return Office.context.requirements.isSetSupported('ExcelApi', version);
+}

@@ -1,0 +1,79 @@
+import { parseAddress, parseCell } from '../address';
+import type { WorkbookPort } from '../port';
+import type { EngineModel, EnginePosition } from './engine';
+
+/** The pane's view of the workbook in the workbench. The model changes when another file is opened. */
+export class WorkbenchWorkbook implements WorkbookPort {
+  readonly kind = 'workbench';
+  #model: EngineModel;
+  readonly #listeners = new Set<() => void>();
+
+  constructor(model: EngineModel) {
+    this.#model = model;
+    this.#listen();
+  }
+
+  get model(): EngineModel {
+    return this.#model;
+  }
+
+  /** Takes another workbook in place of this one. */
+  replace(model: EngineModel): void {
+    this.#model.off('update', this);
+    this.#model = model;
+    this.#listen();
+    this.#tell();
+  }
+
+  onRecalculated(listener: () => void): () => void {
+    this.#listeners.add(listener);
+    return () => this.#listeners.delete(listener);
+  }
+
+  formulasAt(addresses: readonly string[]): Promise<readonly (string | null)[]> {
+    const { getters } = this.#model;
+    return Promise.resolve(
+      addresses.map((address) => {
+        const position = this.#position(address);
+        if (position === null) return null;
+        return getters.getCell(position)?.compiledFormula?.toFormulaString(getters) ?? null;
+      }),
+    );
+  }
+
+  select(address: string): Promise<void> {
+    const position = this.#position(address);
+    if (position !== null) {
+      const from = this.#model.getters.getActiveSheetId();
+      if (from !== position.sheetId) {
+        this.#model.dispatch('ACTIVATE_SHEET', { sheetIdFrom: from, sheetIdTo: position.sheetId });
+      }
+      this.#model.selection.selectCell(position.col, position.row);
+    }
+    return Promise.resolve();
+  }
+
+  recalculate(): Promise<void> {
+    this.#model.dispatch('EVALUATE_CELLS');
+    return Promise.resolve();
+  }
+
+  /** Null for a cell that is not there. */
+  #position(address: string): EnginePosition | null {
+    const { getters } = this.#model;
+    const parsed = parseAddress(address);
+    const cell = parsed === null ? null : parseCell(parsed.cell);
+    const sheetId = parsed === null ? undefined : getters.getSheetIdByName(parsed.sheet);
+    if (cell === null || sheetId === undefined) return null;
+    if (cell.column >= getters.getNumberCols(sheetId) || cell.row >= getters.getNumberRows(sheetId)) return null;
+    return { sheetId, col: cell.column, row: cell.row };
+  }
+
+  #listen(): void {
+    this.#model.on('update', this, () => this.#tell());
+  }
+
+  #tell(): void {
+    for (const listener of this.#listeners) listener();
+  }
+}

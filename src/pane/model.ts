@@ -1,0 +1,152 @@
+import { LAST_PRIORITY } from '../cover/case';
+import type { Call } from '../functions/journal';
+import { shortageReason } from '../functions/reasons';
+import type { Solved } from '../functions/solved';
+import { parseAddress } from '../host/address';
+import type { Finding } from '../sheet/fault';
+
+/** What the pane shows, worked out from the calls alone. */
+export interface PaneModel {
+  /** By the address of their first cell. */
+  readonly cases: readonly CaseView[];
+  /** Errors in cells that belong to no case. */
+  readonly strays: readonly CellError[];
+}
+
+/** One case alive in the workbook. */
+export interface CaseView {
+  /** Stays the same while the case answers in the same first cell. */
+  readonly id: string;
+  readonly cells: readonly CellView[];
+  /** The sheets these cells are on. */
+  readonly sheets: readonly string[];
+  /** Seats, or null where there is no plan. */
+  readonly seats: SeatCount | null;
+  /** The same by priority, most urgent first; empty where there is one only. */
+  readonly priorities: readonly (SeatCount & { readonly label: string })[];
+  /** How far the plan is proven, in words; '' where there is no plan. */
+  readonly proof: string;
+  readonly short: readonly { readonly duty: string; readonly seats: number; readonly reason: string }[];
+  readonly findings: readonly FindingGroup[];
+  /** Why there is no plan, in words: input that cannot be read, or what is not answered yet. */
+  readonly errors: readonly string[];
+  readonly fingerprint: string;
+}
+
+export interface SeatCount {
+  readonly needed: number;
+  readonly covered: number;
+}
+
+export interface CellView {
+  readonly address: string;
+  readonly functionId: string;
+}
+
+export interface CellError extends CellView {
+  readonly message: string;
+}
+
+/** Findings of one kind. */
+export interface FindingGroup {
+  readonly finding: string;
+  readonly details: readonly { readonly place: string; readonly detail: string }[];
+}
+
+/** @param calls the last answer of every cell */
+export function paneModel(calls: readonly Call[]): PaneModel {
+  const bySolved = new Map<Solved, Call[]>();
+  const strays: CellError[] = [];
+  for (const call of calls) {
+    if (call.solved !== null) {
+      const group = bySolved.get(call.solved);
+      if (group === undefined) bySolved.set(call.solved, [call]);
+      else group.push(call);
+    } else if (call.answer.kind === 'fault') {
+      strays.push({ address: call.address, functionId: call.functionId, message: call.answer.message });
+    }
+  }
+  const cases = [...bySolved].map(([solved, group]) => caseView(solved, group));
+  return { cases: cases.sort((a, b) => compareAddresses(a.id, b.id)), strays };
+}
+
+/** One sentence for people who hear the pane rather than see it. */
+export function spokenSummary({ cases, strays }: PaneModel): string {
+  if (cases.length + strays.length === 0) return 'No Dutyproof formulas have answered yet.';
+  const errors = strays.length + cases.filter(({ errors: messages }) => messages.length > 0).length;
+  const planned = cases.flatMap(({ seats }) => (seats === null ? [] : [seats.needed - seats.covered]));
+  const uncovered = planned.reduce((sum, open) => sum + open, 0);
+  const parts = planned.length === 0 ? [] : [`${counted(uncovered, 'seat', 'seats')} uncovered`];
+  if (errors > 0) parts.push(counted(errors, 'error', 'errors'));
+  return `Recalculated: ${parts.join(', ')}.`;
+}
+
+/** `1 seat`, `2 seats`. */
+export function counted(number: number, one: string, many: string): string {
+  return `${number.toLocaleString('en-GB')} ${number === 1 ? one : many}`;
+}
+
+function caseView(solved: Solved, calls: readonly Call[]): CaseView {
+  const cells = calls
+    .map(({ address, functionId }) => ({ address, functionId }))
+    .sort((a, b) => compareAddresses(a.address, b.address));
+  const { faults, findings } = solved.reading;
+  const messages = calls.flatMap(({ answer }) => (answer.kind === 'fault' ? [answer.message] : []));
+  const errors = faults.length > 0 ? faults.map(({ message }) => message) : [...new Set(messages)];
+  const sheets = [...new Set(cells.map(({ address }) => parseAddress(address)?.sheet ?? 'a cell'))];
+  const common = { id: cells[0].address, cells, sheets, findings: groupFindings(findings), errors };
+  if (faults.length > 0 || !isSolvable(solved)) {
+    return { ...common, seats: null, priorities: [], proof: '', short: [], fingerprint: '' };
+  }
+  const { plan, faults: proofFaults } = solved.solution;
+  return {
+    ...common,
+    seats: { needed: plan.needed, covered: plan.covered },
+    priorities: countPriorities(solved),
+    proof: proofFaults.length === 0 ? 'No plan covers more: proven.' : `Not proven: ${proofFaults[0]}`,
+    short: solved.shortages.map((shortage) => ({
+      duty: solved.case.duties[shortage.duty].name,
+      seats: shortage.short,
+      reason: shortageReason(solved.case, shortage),
+    })),
+    fingerprint: solved.fingerprint,
+  };
+}
+
+/** A case may be well written and still ask for what is not answered yet. */
+function isSolvable(solved: Solved): boolean {
+  try {
+    return solved.solution.plan.needed >= 0;
+  } catch {
+    return false;
+  }
+}
+
+function countPriorities({ case: kase, solution }: Solved): (SeatCount & { label: string })[] {
+  const counts = new Map<number, { needed: number; covered: number }>();
+  kase.duties.forEach(({ need, priority }, d) => {
+    const count = counts.get(priority) ?? { needed: 0, covered: 0 };
+    counts.set(priority, count);
+    count.needed += need;
+    count.covered += Math.min(need, solution.plan.heldOfDuty[d]);
+  });
+  if (counts.size < 2) return [];
+  return [...counts]
+    .sort((a, b) => a[0] - b[0])
+    .map(([priority, count]) => ({ label: priority === LAST_PRIORITY ? 'No priority' : `Priority ${priority}`, ...count }));
+}
+
+function groupFindings(findings: readonly Finding[]): FindingGroup[] {
+  const groups = new Map<string, { place: string; detail: string }[]>();
+  for (const { table, row, finding, detail } of findings) {
+    const group = groups.get(finding) ?? [];
+    groups.set(finding, group);
+    group.push({ place: row === null ? table : `${table}, row ${row}`, detail });
+  }
+  return [...groups].map(([finding, details]) => ({ finding, details }));
+}
+
+/** Sheet by sheet, then row by row as far as the text tells: numbers inside addresses compare as numbers. */
+function compareAddresses(one: string, other: string): number {
+  return one.localeCompare(other, 'en', { numeric: true });
+}

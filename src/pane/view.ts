@@ -1,0 +1,162 @@
+import { html, nothing, type TemplateResult } from 'lit-html';
+import { repeat } from 'lit-html/directives/repeat.js';
+import { counted, type CaseView, type CellError, type CellView, type FindingGroup, type PaneModel } from './model';
+
+/** What the views may ask for. */
+export interface Actions {
+  readonly recalculate: () => void;
+  readonly select: (address: string) => void;
+  /** Shows the whole of a list that is cut off, by its key. */
+  readonly showAll: (key: string) => void;
+}
+
+/** Lists shown whole by choice, by their keys. */
+export type Opened = ReadonlySet<string>;
+
+/** Rows of a list shown before the rest is asked for. */
+const FIRST = 8;
+
+const CAUTION =
+  'A plan is a proposal. Rest, qualification, safeguarding and working time are governed by local rules, ' +
+  'which this tool does not know; whoever signs the plan answers for it.';
+
+/** The whole pane. Names come from cells: they are always text, never markup. */
+export function paneView(model: PaneModel, opened: Opened, actions: Actions): TemplateResult {
+  const isEmpty = model.cases.length + model.strays.length === 0;
+  return html`
+    <div class="dp-bar">
+      <h2>Cases in this workbook</h2>
+      <button type="button" @click=${actions.recalculate}>Recalculate</button>
+    </div>
+    ${isEmpty ? emptyView() : nothing}
+    ${repeat(model.cases, ({ id }) => id, (view) => caseView(view, opened, actions))}
+    ${model.strays.length > 0 ? straysView(model.strays, actions) : nothing}
+    <p class="dp-caution">${CAUTION}</p>
+  `;
+}
+
+function emptyView(): TemplateResult {
+  return html`
+    <section class="dp-case">
+      <p>Nothing has been calculated yet in this session.</p>
+      <p class="dp-soft">
+        If the workbook holds Dutyproof formulas, press Recalculate. To begin, name two ranges, one of who may take what and one of how
+        much each can take, and type <code>=DUTY.ASSIGN(Pairs, People)</code> in an empty cell.
+      </p>
+    </section>
+  `;
+}
+
+function caseView(view: CaseView, opened: Opened, actions: Actions): TemplateResult {
+  const { id, cells, sheets, errors, findings } = view;
+  return html`
+    <section class="dp-case" aria-label=${`Case on ${sheets.join(', ')}`}>
+      <h2>Case on <bdi>${sheets.join(', ')}</bdi></h2>
+      ${errors.length > 0 ? list(`${id} errors`, errors, errorView, opened, actions) : nothing}
+      ${view.seats === null ? nothing : planView(view, opened, actions)}
+      ${findings.length > 0 ? findingsView(id, findings, opened, actions) : nothing}
+      <details>
+        <summary>Where it answers (${counted(cells.length, 'cell', 'cells')})</summary>
+        <div class="dp-cells">${cells.map((cell) => cellButton(cell, actions))}</div>
+        ${view.fingerprint === '' ? nothing : html`<p class="dp-soft">Fingerprint of the case: <code>${view.fingerprint}</code></p>`}
+      </details>
+    </section>
+  `;
+}
+
+function errorView(message: string): TemplateResult {
+  return html`<li class="dp-error" dir="auto">${message}</li>`;
+}
+
+function planView({ id, seats, priorities, proof, short }: CaseView, opened: Opened, actions: Actions): TemplateResult {
+  const { needed, covered } = seats!;
+  const open = needed - covered;
+  return html`
+    <p class="dp-total">
+      <strong>${covered.toLocaleString('en-GB')}</strong>
+      <span>of ${counted(needed, 'seat', 'seats')} covered</span>
+      <span class="dp-pill ${open > 0 ? 'dp-short' : 'dp-good'}">${open > 0 ? `${open.toLocaleString('en-GB')} uncovered` : 'all covered'}</span>
+    </p>
+    <div class="dp-gauge" aria-hidden="true"><span style="width:${needed === 0 ? 100 : (100 * covered) / needed}%"></span></div>
+    <p class="dp-soft">${proof}</p>
+    ${priorities.length > 0 ? prioritiesView(priorities) : nothing}
+    ${short.length > 0
+      ? html`<h3>Short (${counted(short.length, 'duty', 'duties')})</h3>
+          ${list(`${id} short`, short, shortView, opened, actions)}`
+      : nothing}
+  `;
+}
+
+function prioritiesView(priorities: CaseView['priorities']): TemplateResult {
+  return html`
+    <table>
+      <thead>
+        <tr><th scope="col">Seats</th><th scope="col">Needed</th><th scope="col">Covered</th><th scope="col">Uncovered</th></tr>
+      </thead>
+      <tbody>
+        ${priorities.map(
+          ({ label, needed, covered }) => html`
+            <tr><th scope="row">${label}</th><td>${needed}</td><td>${covered}</td><td>${needed - covered}</td></tr>
+          `,
+        )}
+      </tbody>
+    </table>
+  `;
+}
+
+function shortView({ duty, seats, reason }: CaseView['short'][number]): TemplateResult {
+  return html`
+    <li class="dp-item">
+      <span class="dp-name dp-clip" dir="auto">${duty}</span>
+      <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')} short</span>
+      <p class="dp-soft dp-clip" dir="auto">${reason}</p>
+    </li>
+  `;
+}
+
+function findingsView(id: string, findings: readonly FindingGroup[], opened: Opened, actions: Actions): TemplateResult {
+  const total = findings.reduce((sum, { details }) => sum + details.length, 0);
+  return html`
+    <details>
+      <summary>Findings (${total.toLocaleString('en-GB')})</summary>
+      ${findings.map(
+        ({ finding, details }) => html`
+          <h3>${finding} (${details.length.toLocaleString('en-GB')})</h3>
+          ${list(
+            `${id} ${finding}`,
+            details,
+            ({ place, detail }) => html`<li class="dp-item"><span class="dp-soft">${place}</span> <span class="dp-clip" dir="auto">${detail}</span></li>`,
+            opened,
+            actions,
+          )}
+        `,
+      )}
+    </details>
+  `;
+}
+
+function straysView(strays: readonly CellError[], actions: Actions): TemplateResult {
+  return html`
+    <section class="dp-case" aria-label="Other errors">
+      <h2>Other errors</h2>
+      <ul>
+        ${strays.map(
+          (stray) => html`<li class="dp-error"><p dir="auto">${stray.message}</p><div class="dp-cells">${cellButton(stray, actions)}</div></li>`,
+        )}
+      </ul>
+    </section>
+  `;
+}
+
+function cellButton({ address, functionId }: CellView, actions: Actions): TemplateResult {
+  return html`<button type="button" @click=${() => actions.select(address)}>${functionId} <bdi>${address}</bdi></button>`;
+}
+
+/** A list cut off after its first rows, with a button that shows the rest. */
+function list<T>(key: string, items: readonly T[], item: (item: T) => TemplateResult, opened: Opened, actions: Actions): TemplateResult {
+  const all = opened.has(key) || items.length <= FIRST + 1;
+  return html`
+    <ul>${(all ? items : items.slice(0, FIRST)).map(item)}</ul>
+    ${all ? nothing : html`<button type="button" @click=${() => actions.showAll(key)}>Show all ${items.length.toLocaleString('en-GB')}</button>`}
+  `;
+}
