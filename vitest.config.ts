@@ -1,7 +1,7 @@
 import { defineConfig } from 'vitest/config';
 
-/** Tests that open pages in a real browser; they need the pages built. */
-const BROWSER_TESTS = ['test/excel/**/*.test.ts', 'test/workbench/**/*.test.ts', 'test/**/*.browser.test.ts'];
+/** Tests that open the built pages in a real browser. */
+const BROWSER_TESTS = ['test/browser/**/*.test.ts'];
 
 export default defineConfig({
   test: {
@@ -11,7 +11,7 @@ export default defineConfig({
           name: 'unit',
           include: ['test/**/*.test.ts'],
           exclude: BROWSER_TESTS,
-          testTimeout: 30_000,
+          testTimeout: 120_000,
           benchmark: { include: ['bench/**/*.bench.ts'] },
         },
       },
@@ -19,13 +19,13 @@ export default defineConfig({
         test: {
           name: 'browser',
           include: BROWSER_TESTS,
-          globalSetup: ['test/helpers/buildPages.ts'],
+          globalSetup: ['test/browser/setup.ts'],
           testTimeout: 120_000,
-          hookTimeout: 120_000,
+          hookTimeout: 300_000,
+          fileParallelism: false,
           benchmark: { include: [] },
         },
       },
     ],
-    coverage: { provider: 'v8', include: ['src/**'] },
   },
 });

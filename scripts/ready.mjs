@@ -8,7 +8,7 @@ import { fileURLToPath } from 'node:url';
 import { findBrowser } from './browser.mjs';
 
 const root = dirname(dirname(fileURLToPath(import.meta.url)));
-const OLDEST_NODE = [20, 12];
+const OLDEST_NODE = [20, 19];
 
 /** @param {string} sentence */
 function giveUp(sentence) {

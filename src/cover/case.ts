@@ -83,6 +83,7 @@ export interface Limit {
 /** What a plan aims at after covering and minimums. */
 export type Aim = 'changes' | 'ranks' | 'evenness';
 
+/** One set of inputs, canonical. */
 export interface Case {
   /** In table order; without a duties table in the order of first appearance. */
   readonly duties: readonly Duty[];

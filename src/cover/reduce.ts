@@ -36,6 +36,7 @@ export interface Reduction {
   readonly openPair: Int32Array;
 }
 
+/** The duties of one priority. */
 export interface PriorityClass {
   readonly priority: number;
   readonly node: number;

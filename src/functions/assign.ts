@@ -1,4 +1,5 @@
 import { writeTable } from '../sheet/write';
+import type { Spill } from '../sheet/range';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import { seatsByDuty } from './seats';
 import type { Solved } from './solved';
@@ -19,7 +20,7 @@ export const ASSIGN: CaseFunction = {
   ofCase: assign,
 };
 
-function assign(solved: Solved) {
+function assign(solved: Solved): Spill {
   const kase = solved.case;
   const { plan } = solved.solution;
   const rows = seatsByDuty(kase, plan).flatMap((seats, d) => {

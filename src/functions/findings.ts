@@ -1,4 +1,5 @@
 import { writeTable } from '../sheet/write';
+import type { Spill } from '../sheet/range';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import type { Solved } from './solved';
 
@@ -19,7 +20,7 @@ export const FINDINGS: CaseFunction = {
   ofCase: findings,
 };
 
-function findings({ reading }: Solved) {
+function findings({ reading }: Solved): Spill {
   const rows = [
     ...reading.faults.map(({ place, message }) => [place.table, place.row ?? '', 'Cannot be read', message]),
     ...reading.findings.map(({ table, row, finding, detail }) => [table, row ?? '', finding, detail]),

@@ -1,4 +1,5 @@
 import { cutText, SHEET_COLUMNS } from '../sheet/write';
+import type { Spill } from '../sheet/range';
 import { CASE_PARAMETERS, type CaseFunction } from './declaration';
 import { Refusal } from './refusal';
 import type { Solved } from './solved';
@@ -20,7 +21,7 @@ export const GRID: CaseFunction = {
   ofCase: grid,
 };
 
-function grid(solved: Solved) {
+function grid(solved: Solved): Spill {
   const kase = solved.case;
   const { plan } = solved.solution;
   const width = kase.people.length + 2;

@@ -1,6 +1,7 @@
 import { gains } from '../cover/gains';
 import type { Person } from '../cover/case';
 import { joinNames, writeTable } from '../sheet/write';
+import type { Spill } from '../sheet/range';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import { dutiesByPerson } from './seats';
 import type { Solved } from './solved';
@@ -26,7 +27,7 @@ export const LOADS: CaseFunction = {
   ofCase: loads,
 };
 
-function loads(solved: Solved) {
+function loads(solved: Solved): Spill {
   const kase = solved.case;
   const { reduction, residual, plan } = solved.solution;
   const gain = gains(reduction, residual);

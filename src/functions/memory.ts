@@ -29,7 +29,8 @@ function sameRanges(one: readonly (Range | null)[], other: readonly (Range | nul
 
 function sameRange(one: Range | null, other: Range | null): boolean {
   if (one === other) return true;
-  if (one === null || other === null || one.length !== other.length) return false;
+  if (one === null || other === null) return false;
+  if (one.length !== other.length) return false;
   for (let r = 0; r < one.length; r++) {
     const a = one[r];
     const b = other[r];

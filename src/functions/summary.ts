@@ -1,4 +1,5 @@
 import { writeTable } from '../sheet/write';
+import type { Spill } from '../sheet/range';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import type { Solved } from './solved';
 
@@ -16,7 +17,7 @@ export const SUMMARY: CaseFunction = {
   ofCase: summary,
 };
 
-function summary(solved: Solved) {
+function summary(solved: Solved): Spill {
   const { plan, faults } = solved.solution;
   const rows: (readonly [string, string | number])[] = [
     ['Seats needed', plan.needed],

@@ -1,4 +1,5 @@
 import { writeTable } from '../sheet/write';
+import type { Spill } from '../sheet/range';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import { shortageReason } from './reasons';
 import type { Solved } from './solved';
@@ -21,7 +22,7 @@ export const UNCOVERED: CaseFunction = {
   ofCase: uncovered,
 };
 
-function uncovered(solved: Solved) {
+function uncovered(solved: Solved): Spill {
   const kase = solved.case;
   const rows = solved.shortages.map((shortage) => {
     const { name, need } = kase.duties[shortage.duty];

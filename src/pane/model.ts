@@ -33,16 +33,19 @@ export interface CaseView {
   readonly fingerprint: string;
 }
 
+/** Seats of a case or of one priority. */
 export interface SeatCount {
   readonly needed: number;
   readonly covered: number;
 }
 
+/** A cell with a function of ours. */
 export interface CellView {
   readonly address: string;
   readonly functionId: string;
 }
 
+/** The same with what went wrong. */
 export interface CellError extends CellView {
   readonly message: string;
 }

@@ -27,14 +27,14 @@ export function caseRules(rules: readonly Rule[], context: Context, report: Repo
   const known = rules.filter(knownOnly(context, report));
   const of = <W extends Rule['word']>(word: W): Extract<Rule, { word: W }>[] =>
     known.filter((rule): rule is Extract<Rule, { word: W }> => rule.word === word);
-  const barred = seats(of('Barred') as SeatRule[], context, report);
+  const barred = seats(of('Barred'), context, report);
   return {
-    fixed: withoutBarred(seats(of('Fixed') as SeatRule[], context, report), barred, context, report),
+    fixed: withoutBarred(seats(of('Fixed'), context, report), barred, context, report),
     barred: barred.map(({ duty, person }) => ({ duty, person })),
     away: awayOf(of('Away'), context),
     limits: limitsOf(of('Limit'), context),
-    clashes: dutyPairs(of('Clash') as TwoDuties[], context),
-    together: dutyPairs(of('Together') as TwoDuties[], context),
+    clashes: dutyPairs(of('Clash'), context),
+    together: dutyPairs(of('Together'), context),
     rest: Math.max(0, ...of('Rest').map(({ minutes }) => minutes)),
     seconds: Math.min(...(of('Seconds').length > 0 ? of('Seconds').map(({ seconds }) => seconds) : [DEFAULT_SECONDS])),
     order: oneOrder(of('Order'), report),

@@ -15,10 +15,10 @@ export function findFixedOddities(kase: Case, report: Report): void {
     heldByPerson[person]++;
   }
   kase.duties.forEach(({ name, need }, d) => {
-    if (heldOfDuty[d] > need) find(`Fixed rows give "${name}" ${heldOfDuty[d]} people; it needs ${need}.`);
+    if (heldOfDuty[d] > need) find(`Fixed rows give "${name}" ${people(heldOfDuty[d])}; it needs ${need}.`);
   });
   kase.people.forEach(({ name, maximum }, p) => {
-    if (heldByPerson[p] > maximum) find(`Fixed rows give ${name} ${heldByPerson[p]} duties; the maximum is ${maximum}.`);
+    if (heldByPerson[p] > maximum) find(`Fixed rows give ${name} ${duties(heldByPerson[p])}; the maximum is ${maximum}.`);
   });
   findFullSets(kase, find);
 }
@@ -54,6 +54,14 @@ function findFullSets(kase: Case, find: (detail: string) => void): void {
   }
   for (const { set, person, count } of held.values()) {
     const most = mostOf(sets[set], person);
-    if (count > most) find(`Fixed rows give ${kase.people[person].name} ${count} duties in "${sets[set].name}"; at most ${most} are allowed.`);
+    if (count > most) find(`Fixed rows give ${kase.people[person].name} ${duties(count)} in "${sets[set].name}"; at most ${most} ${most === 1 ? 'is' : 'are'} allowed.`);
   }
+}
+
+function people(count: number): string {
+  return `${count} ${count === 1 ? 'person' : 'people'}`;
+}
+
+function duties(count: number): string {
+  return `${count} ${count === 1 ? 'duty' : 'duties'}`;
 }

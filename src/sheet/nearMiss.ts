@@ -104,14 +104,15 @@ function withoutDigits(key: string): string {
 
 /** The most slips of the pen in a name of so many characters. */
 function farthest(length: number): number {
-  if (length < 4) return 0;
+  if (length < 3) return 0;
   return length < 7 ? 1 : 2;
 }
 
 function distanceBetween(one: Candidate, other: Candidate, most: number): number {
   if (one.essence === other.essence || one.words === other.words) return 0;
   if (Math.abs(one.key.length - other.key.length) > most) return Infinity;
-  if (bits(one.letters ^ other.letters) > 2 * most) return Infinity;
+  // Of three letters, one too many is another name: only the same letters count.
+  if (bits(one.letters ^ other.letters) > (one.key.length > 3 ? 2 * most : 0)) return Infinity;
   return slips(one.key, other.key);
 }
 

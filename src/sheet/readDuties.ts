@@ -1,5 +1,5 @@
 import { LAST_PRIORITY, type Interval } from '../cover/case';
-import { isBlank } from './cell';
+import { errorCode, isBlank } from './cell';
 import { nameKey, cleanName, type Names } from './name';
 import type { Range } from './range';
 import { readOneNumber } from './readPeople';
@@ -48,14 +48,14 @@ export function readDuties(range: Range | null, duties: Names, labels: Map<strin
   if (isOneNumber(range)) return { kind: 'every', need: readOneNumber(LAYOUT, 'Need', range, report) };
   const entries: DutyEntry[] = [];
   const table = openTable(range, LAYOUT, report);
-  for (const row of table === null ? [] : rowsOf(table, report)) {
+  if (table === null) return { kind: 'every', need: 1 };
+  for (const row of rowsOf(table, report)) {
     const name = row.text('Duty');
     if (name === '') {
-      row.find('Incomplete row', 'The row names no duty and is left out.');
+      if (!row.isBroken) row.find('Incomplete row', 'The row names no duty and is left out.');
       continue;
     }
     const entry = readEntry(row, labels);
-    if (entry === null) continue;
     const number = duties.number(name);
     if (number === entries.length) entries.push(entry);
     else combine(entries[number], entry, duties.names[number], row);
@@ -63,19 +63,14 @@ export function readDuties(range: Range | null, duties: Names, labels: Map<strin
   return { kind: 'table', entries };
 }
 
-function readEntry(row: Row, labels: Map<string, string>): DutyEntry | null {
-  const need = row.whole('Need', 0, 1);
-  const priority = row.whole('Priority', 1, LAST_PRIORITY);
-  const load = row.whole('Load', 0, 1);
-  const times = readTimes(row);
-  if (need === null || priority === null || load === null || times === null) return null;
+function readEntry(row: Row, labels: Map<string, string>): DutyEntry {
   return {
-    need,
-    priority,
-    load,
+    need: row.whole('Need', 0, 1),
+    priority: row.whole('Priority', 1, LAST_PRIORITY),
+    load: row.whole('Load', 0, 1),
     slots: readLabel(row, 'Slot', labels),
     groups: readLabel(row, 'Group', labels),
-    times,
+    times: readTimes(row),
     row: row.number,
   };
 }
@@ -89,28 +84,29 @@ function readLabel(row: Row, column: string, labels: Map<string, string>): Set<s
 }
 
 /** Start and End as minutes; an End at or before its Start is on the next day. */
-function readTimes(row: Row): Interval[] | null {
+function readTimes(row: Row): Interval[] {
   const start = readMinutes(row, 'Start');
   const end = readMinutes(row, 'End');
-  if (start === undefined || end === undefined) return null;
+  if (start === undefined || end === undefined) return [];
   // Older desktops hand over blank cells as 0.
   if ((start ?? 0) === 0 && (end ?? 0) === 0) return [];
   if (start === null || end === null) {
     const missing = start === null ? 'Start' : 'End';
     row.fault(missing, row.cell(missing), 'a date and time here too, or both Start and End blank');
-    return null;
+    return [];
   }
   let last = end;
   if (last <= start) last += MINUTES_A_DAY;
   if (last > start) return [{ start, end: last }];
   row.fault('End', row.cell('End'), 'an End on the day of the Start or the day after it');
-  return null;
+  return [];
 }
 
 /** Minutes of a serial date-time or time; null where blank; undefined, with a fault reported, where it is none. */
 function readMinutes(row: Row, column: string): number | null | undefined {
   const cell = row.cell(column);
   if (isBlank(cell)) return null;
+  if (errorCode(cell) !== null) return undefined;
   if (typeof cell === 'number' && cell >= 0 && cell < 3_000_000) return Math.round(cell * MINUTES_A_DAY);
   row.fault(column, cell, 'a date and time, or a time, as a cell value and not as text');
   return undefined;

@@ -1,4 +1,4 @@
-import { cellText, isBlank, isBlankName } from './cell';
+import { isBlank } from './cell';
 import type { Names } from './name';
 import type { Range } from './range';
 import type { Report } from './report';
@@ -93,13 +93,9 @@ function readCarefully(table: Table, index: number, rows: PairRows, duties: Name
   const one = { ...table, first: index, end: index + 1 };
   for (const row of rowsOf(one, report)) {
     const rank = row.whole('Rank', 0, NO_RANK);
-    if (rank === null) continue;
-    const [duty, person] = [row.cell('Duty'), row.cell('Person')];
-    if (isBlankName(duty) || isBlankName(person)) {
-      row.find('Incomplete row', `The row names ${isBlankName(duty) ? 'no duty' : 'no person'} and is left out.`);
-    } else {
-      addRow(rows, duties.number(cellText(duty)), people.number(cellText(person)), rank, row.number);
-    }
+    const [duty, person] = [row.text('Duty'), row.text('Person')];
+    if (duty !== '' && person !== '') addRow(rows, duties.number(duty), people.number(person), rank, row.number);
+    else if (!row.isBroken) row.find('Incomplete row', `The row names ${duty === '' ? 'no duty' : 'no person'} and is left out.`);
   }
 }
 

@@ -1,4 +1,5 @@
-import type { Names } from './name';
+import { isBlank } from './cell';
+import { cleanName, type Names } from './name';
 import type { Range } from './range';
 import type { Report } from './report';
 import { isOneNumber, openTable, Row, rowsOf, type Layout } from './table';
@@ -31,14 +32,14 @@ export function readPeople(range: Range, people: Names, report: Report): PeopleT
   if (isOneNumber(range)) return { kind: 'everyone', maximum: readOneNumber(LAYOUT, 'Maximum', range, report) };
   const entries: PersonEntry[] = [];
   const table = openTable(range, LAYOUT, report);
-  for (const row of table === null ? [] : rowsOf(table, report)) {
+  if (table === null) return { kind: 'everyone', maximum: 0 };
+  for (const row of rowsOf(table, report)) {
     const name = row.text('Person');
     if (name === '') {
-      row.find('Incomplete row', 'The row names no person and is left out.');
+      if (!row.isBroken) row.find('Incomplete row', 'The row names no person and is left out.');
       continue;
     }
     const entry = readEntry(row);
-    if (entry === null) continue;
     const number = people.number(name);
     if (number === entries.length) entries.push(entry);
     else combine(entries[number], entry, people.names[number], row);
@@ -52,14 +53,17 @@ export function readPeople(range: Range, people: Names, report: Report): PeopleT
   return { kind: 'table', entries };
 }
 
-function readEntry(row: Row): PersonEntry | null {
-  const maximum = row.whole('Maximum', 0, -1);
-  const minimum = row.whole('Minimum', 0, 0);
-  const stretch = row.whole('Stretch', 0, 1);
-  const carried = row.whole('Carried', 0, 0);
-  if (maximum === null || minimum === null || stretch === null || carried === null) return null;
-  if (maximum === -1) row.find('Blank maximum', `The maximum of ${row.text('Person').trim()} is blank and is read as 0.`);
-  return { maximum: Math.max(0, maximum), minimum, stretch, carried, row: row.number };
+function readEntry(row: Row): PersonEntry {
+  if (isBlank(row.cell('Maximum'))) {
+    row.find('Blank maximum', `The maximum of ${cleanName(row.text('Person'))} is blank and is read as 0.`);
+  }
+  return {
+    maximum: row.whole('Maximum', 0, 0),
+    minimum: row.whole('Minimum', 0, 0),
+    stretch: row.whole('Stretch', 0, 1),
+    carried: row.whole('Carried', 0, 0),
+    row: row.number,
+  };
 }
 
 /** Of two rows about one person, the stricter number counts. */
@@ -74,5 +78,6 @@ function combine(entry: PersonEntry, other: PersonEntry, name: string, row: Row)
 /** Reads the one number of a range that is one number; 0, with a fault reported, where it is no whole number. */
 export function readOneNumber(layout: Layout, column: string, range: Range, report: Report): number {
   const table = { table: layout.table, range, first: 0, end: 1, places: new Map([[column, 0]]) };
-  return new Row(table, 0, report).whole(column, 0, 0) ?? 0;
+  const [row] = rowsOf(table, report);
+  return (row ?? new Row(table, 0, report)).whole(column, 0, 0);
 }

@@ -52,6 +52,7 @@ export function readRules(range: Range, report: Report): Rule[] {
   const table = openTable(range, LAYOUT, report);
   const rules: Rule[] = [];
   for (const row of table === null ? [] : rowsOf(table, report)) {
+    if (row.isBroken) continue;
     const word = WORDS.get(nameKey(row.text('Rule')));
     if (word === undefined) {
       row.fault('Rule', row.cell('Rule'), `one of the words ${[...WORDS.values()].join(', ')}`);
@@ -117,8 +118,7 @@ function readPrice(row: Row): Rule | null {
     return null;
   }
   if (isBlank(row.cell('Value'))) return { word: 'Price', what, price: null, row: row.number };
-  const price = row.whole('Value', 0, 0);
-  return price === null ? null : { word: 'Price', what, price, row: row.number };
+  return { word: 'Price', what, price: row.whole('Value', 0, 0), row: row.number };
 }
 
 /** The number in Value, which the rule cannot do without. */

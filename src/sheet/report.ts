@@ -3,6 +3,9 @@ import { InputFault, type FaultPlace, type Finding, type TableName } from './fau
 /** Findings of one kind in one table that are listed before the rest is only counted. */
 const LISTED = 1000;
 
+/** More rows than a sheet has. */
+const LAST_ROW = 2_000_000;
+
 const TABLES: readonly TableName[] = ['Pairs', 'People', 'Duties', 'Rules', 'Current', 'Plan', 'Grid'];
 
 /** Collects what is wrong and what is odd while tables are read, in whatever order they are read. */
@@ -36,9 +39,9 @@ export class Report {
     for (const [kind, count] of this.#counts) {
       if (count <= LISTED) continue;
       const { table, finding } = all.find((entry) => `${entry.table} ${entry.finding}` === kind)!;
-      all.push({ table, row: Infinity, finding, detail: `And ${count - LISTED} more of this kind.` });
+      all.push({ table, row: LAST_ROW + 1, finding, detail: `And ${count - LISTED} more of this kind.` });
     }
-    return all.sort(byPlace).map((entry) => (entry.row === Infinity ? { ...entry, row: null } : entry));
+    return all.sort(byPlace).map((entry) => (entry.row === LAST_ROW + 1 ? { ...entry, row: null } : entry));
   }
 }
 
@@ -47,6 +50,11 @@ interface Place {
   readonly row: number | null;
 }
 
+/** What is said of a whole table comes after its rows. */
+function rowOf({ row }: Place): number {
+  return row ?? LAST_ROW;
+}
+
 function byPlace(a: Place, b: Place): number {
-  return TABLES.indexOf(a.table) - TABLES.indexOf(b.table) || (a.row ?? 0) - (b.row ?? 0);
+  return TABLES.indexOf(a.table) - TABLES.indexOf(b.table) || rowOf(a) - rowOf(b);
 }

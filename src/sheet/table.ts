@@ -98,6 +98,8 @@ export class Row {
   readonly #report: Report;
   /** Row within the range, from 1. */
   readonly number: number;
+  /** True where an error cell stands in the row; it has been reported. */
+  isBroken = false;
 
   constructor(table: Table, index: number, report: Report) {
     this.#table = table;
@@ -114,17 +116,21 @@ export class Row {
   /** A name or label; '' where blank. */
   text(column: string): string {
     const cell = this.cell(column);
-    return isBlankName(cell) ? '' : cellText(cell);
+    return isBlankName(cell) || errorCode(cell) !== null ? '' : cellText(cell);
   }
 
-  /** A whole number from `least`; `blank` where blank; null, with a fault reported, where it is none. */
-  whole(column: string, least: number, blank: number): number | null {
+  /**
+   * A whole number from `least`; `blank` where the cell is blank, and also, with a fault reported,
+   * where it is no such number: the rest of the row can then still be read.
+   */
+  whole(column: string, least: number, blank: number): number {
     const cell = this.cell(column);
+    if (errorCode(cell) !== null) return blank;
     const read = readWhole(cell, least);
     if (read.kind === 'blank') return blank;
     if (read.kind === 'other') {
       this.fault(column, cell, wholeExpected(least));
-      return null;
+      return blank;
     }
     if (read.asText) {
       this.find('Number written as text', `Column ${column}: the text ${quoteCell(cell)} is read as the number ${read.value}.`);
@@ -141,16 +147,19 @@ export class Row {
   }
 }
 
-/** The rows that say something. A row with an error cell in a column that is read is reported and left out. */
+/** The rows that say something. Error cells in columns that are read are reported. */
 export function* rowsOf(table: Table, report: Report): Generator<Row> {
   const places = [...table.places.entries()];
   for (let index = table.first; index < table.end; index++) {
     const cells = table.range[index];
     if (places.every(([, place]) => isBlankName(cells[place]))) continue;
     const row = new Row(table, index, report);
-    const broken = places.filter(([, place]) => typeof cells[place] === 'object' && errorCode(cells[place]) !== null);
-    for (const [column, place] of broken) row.fault(column, cells[place], expectedIn(column));
-    if (broken.length === 0) yield row;
+    for (const [column, place] of places) {
+      if (typeof cells[place] !== 'object' || errorCode(cells[place]) === null) continue;
+      row.fault(column, cells[place], expectedIn(column));
+      row.isBroken = true;
+    }
+    yield row;
   }
 }
 

@@ -18,6 +18,7 @@ function handlerOf(fn: CellFunction, journal: Journal): (...args: unknown[]) => 
     const invocation = args.at(-1) as Partial<CustomFunctions.Invocation> | null | undefined;
     const ranges = fn.parameters.map((_, i) => toRange(args[i]));
     const answer = invoke(fn, ranges, invocation?.address ?? '', journal);
+    // eslint-disable-next-line @typescript-eslint/only-throw-error -- Excel's own error class is no Error
     if (answer.kind === 'fault') throw new CustomFunctions.Error(CustomFunctions.ErrorCode.invalidValue, answer.message);
     return answer.spill as unknown[][];
   };

@@ -12,12 +12,14 @@ export interface EngineCell {
   readonly position?: EnginePosition;
 }
 
+/** A cell: column and row from 0. */
 export interface EnginePosition {
   readonly sheetId: string;
   readonly col: number;
   readonly row: number;
 }
 
+/** A rectangle of cells, both ends included, from 0. */
 export interface EngineZone {
   readonly left: number;
   readonly right: number;
@@ -38,6 +40,7 @@ export interface EngineContext {
   getFormulaResult(position: EnginePosition): EngineCell;
 }
 
+/** A function as the engine registers it. */
 export interface EngineFunction {
   readonly description: string;
   readonly args: readonly {
@@ -52,6 +55,20 @@ export interface EngineFunction {
   readonly hidden?: boolean;
 }
 
+/** What is typed in a cell. */
+export interface EngineContent {
+  readonly content?: string;
+  readonly compiledFormula?: { toFormulaString(getters: EngineGetters): string };
+}
+
+/** What a cell comes to; `type` is 'error' for errors, whose code is the value. */
+export interface EngineEvaluated {
+  readonly type: string;
+  readonly value: string | number | boolean | null;
+  readonly message?: string;
+}
+
+/** What a model tells. */
 export interface EngineGetters {
   getActiveSheetId(): string;
   getSheetIds(): readonly string[];
@@ -60,12 +77,13 @@ export interface EngineGetters {
   isSheetVisible(sheetId: string): boolean;
   getNumberCols(sheetId: string): number;
   getNumberRows(sheetId: string): number;
-  getCell(position: EnginePosition): { readonly content?: string; readonly compiledFormula?: { toFormulaString(getters: EngineGetters): string } } | undefined;
-  getEvaluatedCell(position: EnginePosition): { readonly type: string; readonly value: string | number | boolean | null; readonly message?: string };
+  getCell(position: EnginePosition): EngineContent | undefined;
+  getEvaluatedCell(position: EnginePosition): EngineEvaluated;
   getSpreadZone(position: EnginePosition): EngineZone | undefined;
   getRangeFromZone(sheetId: string, zone: EngineZone): unknown;
 }
 
+/** A workbook in the engine. */
 export interface EngineModel {
   readonly getters: EngineGetters;
   readonly selection: { selectCell(col: number, row: number): unknown };
@@ -84,6 +102,7 @@ export interface EngineData {
   readonly namedRanges: Readonly<Record<string, string>>;
 }
 
+/** One sheet of its data. */
 export interface EngineSheet {
   readonly id: string;
   readonly name: string;
@@ -99,6 +118,7 @@ export interface EngineSheet {
   readonly panes?: { readonly xSplit: number; readonly ySplit: number };
 }
 
+/** How a cell looks. */
 export interface EngineStyle {
   readonly bold?: boolean;
   readonly italic?: boolean;

@@ -7,6 +7,7 @@ export interface Book {
   readonly lost: readonly string[];
 }
 
+/** One sheet. */
 export interface BookSheet {
   readonly name: string;
   readonly hidden: boolean;
@@ -19,6 +20,7 @@ export interface BookSheet {
   readonly frozen: { readonly rows: number; readonly columns: number };
 }
 
+/** One cell that holds or shows something. */
 export interface BookCell {
   /** Row and column from 0. */
   readonly row: number;
@@ -35,6 +37,7 @@ export interface BookCell {
   readonly spill?: { readonly rows: number; readonly columns: number };
 }
 
+/** How a cell looks; what is left out is as usual. */
 export interface BookStyle {
   readonly bold?: boolean;
   readonly italic?: boolean;

@@ -42,7 +42,13 @@ class Numbered<T> {
   }
 }
 
-function toEngineSheet(sheet: BookSheet, id: string, styles: Numbered<EngineStyle>, formats: Numbered<string>, engine: Engine): EngineSheet {
+function toEngineSheet(
+  sheet: BookSheet,
+  id: string,
+  styles: Numbered<EngineStyle>,
+  formats: Numbered<string>,
+  engine: Engine,
+): EngineSheet {
   const cells: Record<string, string> = {};
   const styleOf: Record<string, number> = {};
   const formatOf: Record<string, number> = {};
@@ -182,5 +188,5 @@ function fromEngineStyle(style: EngineStyle | undefined): BookStyle | undefined 
     align,
     wrap: wrapping === 'wrap' ? true : undefined,
   });
-  return Object.fromEntries(entries.filter(([, value]) => value !== undefined && value !== false)) as BookStyle;
+  return Object.fromEntries(entries.filter(([, value]) => value !== undefined && value !== false));
 }

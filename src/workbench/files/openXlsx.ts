@@ -19,7 +19,7 @@ export async function openXlsx(bytes: Uint8Array): Promise<Book> {
   try {
     workbook = await readXlsx(bytes, { readStyles: true });
   } catch (error) {
-    throw new Error(`This file cannot be read as an .xlsx workbook (${error instanceof Error ? error.message : String(error)}).`);
+    throw new Error(`This file cannot be read as an .xlsx workbook (${error instanceof Error ? error.message : String(error)}).`, { cause: error });
   }
   const names = (workbook.namedRanges ?? [])
     .filter(({ name }) => !name.startsWith('_xlnm.'))
@@ -112,7 +112,7 @@ function readStyle(style: CellStyle | undefined): BookStyle | null {
     align: horizontal === 'left' || horizontal === 'center' || horizontal === 'right' ? horizontal : undefined,
     wrap: alignment?.wrapText === true ? true : undefined,
   }).filter(([, value]) => value !== undefined);
-  return entries.length === 0 ? null : (Object.fromEntries(entries) as BookStyle);
+  return entries.length === 0 ? null : (Object.fromEntries(entries));
 }
 
 /** `FFAABBCC` and `AABBCC` become `#aabbcc`. */

@@ -1,0 +1,38 @@
+/** Imports point inwards only: flow <- cover <- sheet <- functions <- host, pane <- workbench <- entries. */
+const rooms = [
+  ['flow', [], 'flow/ holds integers and typed arrays; it knows no names, no cells and no other room.'],
+  ['cover', ['flow'], 'cover/ holds the staffing question; it may use flow/ only, never cells or hosts.'],
+  ['sheet', ['cover'], 'sheet/ reads and writes cells; it may know the case of cover/, nothing further out.'],
+  ['functions', ['flow', 'cover', 'sheet'], 'functions/ may use the rooms inside it, never a host or the pane.'],
+  ['host', ['functions', 'sheet', 'cover'], 'host/ adapts workbooks to the functions; it must not know the pane or a page.'],
+  ['pane', ['functions', 'sheet', 'cover', 'host'], 'pane/ shows what the functions answered, through the port.'],
+  ['workbench', ['functions', 'sheet', 'host'], 'workbench/ is the page around the sheet engine; the pane is put in by its entry.'],
+];
+
+module.exports = {
+  forbidden: [
+    ...rooms.map(([room, allowed, comment]) => ({
+      name: `${room}-points-inwards`,
+      comment,
+      severity: 'error',
+      from: { path: `^src/${room}/` },
+      to: { path: '^src/', pathNot: [room, ...allowed].map((name) => `^src/${name}/`) },
+    })),
+    {
+      name: 'only-entries-choose-a-host',
+      comment: 'The pane sees workbooks through host/port.ts and addresses through host/address.ts, never an adapter.',
+      severity: 'error',
+      from: { path: '^src/pane/' },
+      to: { path: '^src/host/', pathNot: '^src/host/(port|address)[.]ts$' },
+    },
+    {
+      name: 'no-engine-in-excel',
+      comment: 'The bundle that Excel loads must not reach the sheet engine or the file library.',
+      severity: 'error',
+      from: { path: '^src/entries/excel[.]ts$' },
+      to: { path: '(@odoo|hucre|papaparse|src/workbench|src/host/workbench)', reachable: true },
+    },
+    { name: 'no-cycles', comment: 'A circle of imports has no inside.', severity: 'error', from: {}, to: { circular: true, viaOnly: { dependencyTypesNot: ['type-only'] } } },
+  ],
+  options: { tsConfig: { fileName: 'tsconfig.json' }, tsPreCompilationDeps: true, doNotFollow: { path: 'node_modules' } },
+};

@@ -1,0 +1,2 @@
+export function findBrowser(): string | null;
+export const QUIET_SWITCHES: string[];
