@@ -15,7 +15,8 @@ export interface FunctionMetadata {
     readonly dimensionality: 'matrix';
     readonly optional?: true;
   }[];
-  readonly result: { readonly type: 'any'; readonly dimensionality: 'matrix' };
+  /** Of any type, which is what leaving the type out means. */
+  readonly result: { readonly dimensionality: 'matrix' };
 }
 
 /** The whole of functions.json. */
@@ -45,7 +46,7 @@ export function makeFunctionsJson(functions: readonly CellFunction[], { origin }
         dimensionality: 'matrix',
         ...(optional ? { optional: true as const } : {}),
       })),
-      result: { type: 'any', dimensionality: 'matrix' },
+      result: { dimensionality: 'matrix' },
     })),
   };
 }

@@ -28,9 +28,14 @@ function installPackages() {
   const wanted = join(root, 'package-lock.json');
   if (existsSync(installed) && statSync(installed).mtimeMs >= statSync(wanted).mtimeMs) return;
   console.log('Installing packages (npm ci) ...');
-  execFileSync('npm', ['ci', '--no-audit', '--no-fund'], { cwd: root, stdio: 'inherit', shell: process.platform === 'win32' });
+  try {
+    execFileSync('npm', ['ci', '--no-audit', '--no-fund'], { cwd: root, stdio: 'inherit', shell: process.platform === 'win32' });
+  } catch {
+    giveUp('The packages could not be installed: npm ci failed, for the reason it gave above.');
+  }
 }
 
+/** @returns {string[] | null} what to put before apt-get, or null where packages cannot be installed */
 function haveAptGet() {
   if (process.platform !== 'linux') return null;
   try {
@@ -43,14 +48,26 @@ function haveAptGet() {
   }
 }
 
+/**
+ * @param {readonly string[]} prefix what makes the command run as root
+ * @param {readonly string[]} args
+ */
+function aptGet(prefix, ...args) {
+  const [command, ...rest] = [...prefix, 'apt-get', ...args];
+  execFileSync(command, rest, { stdio: 'inherit', env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' } });
+}
+
 function installBrowser() {
   if (findBrowser() !== null) return;
   const prefix = haveAptGet();
   if (prefix !== null) {
     console.log('Installing Chromium for the tests (apt-get) ...');
-    const run = (...args) => execFileSync([...prefix, 'apt-get'][0], [...prefix, 'apt-get', ...args].slice(1), { stdio: 'inherit' });
-    run('update');
-    run('install', '-y', '--no-install-recommends', 'chromium');
+    try {
+      aptGet(prefix, 'update');
+      aptGet(prefix, 'install', '-y', '--no-install-recommends', 'chromium');
+    } catch {
+      console.error('apt-get could not install Chromium.');
+    }
   }
   if (findBrowser() !== null) return;
   giveUp('The tests need a Chromium-family browser: install Chromium, Chrome or Edge, or set CHROMIUM_PATH to its program.');

@@ -1,1 +1,5 @@
-export function serve(folder: string, port: number): Promise<{ origin: string; close: () => Promise<void> }>;
+export function serve(
+  folder: string,
+  port: number,
+  secure?: { cert: string | Buffer; key: string | Buffer },
+): Promise<{ origin: string; close: () => Promise<void> }>;

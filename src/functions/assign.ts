@@ -13,7 +13,7 @@ const COLUMNS = [
 
 export const ASSIGN: CaseFunction = {
   id: 'ASSIGN',
-  summary: 'Who takes which duty: one row a seat, covering as many seats as possible, the most urgent duties first.',
+  summary: 'Who takes which duty, a row a seat: as many seats covered as possible, the most urgent duties first.',
   parameters: CASE_PARAMETERS,
   columns: COLUMNS,
   example: '=DUTY.ASSIGN(Pairs, People, Duties, Rules)',

@@ -26,7 +26,7 @@ export function headings(columns: readonly Column[]): string[] {
 interface Declaration {
   /** Upper case, without the namespace; never changed once published. */
   readonly id: string;
-  /** What it answers, in one or two sentences; at most 512 characters. */
+  /** What it answers, in one sentence; at most 128 characters. */
   readonly summary: string;
   readonly parameters: readonly Parameter[];
   /** The columns of the spilled table; GRID, whose columns are people, stands for them in one. */
@@ -65,14 +65,12 @@ export const CASE_PARAMETERS: readonly Parameter[] = [
   },
   {
     name: 'people',
-    description: 'How much each can take: columns Person, Maximum, Minimum, Stretch; or one number, the maximum of everyone.',
+    description: 'How much each can take: Person, Maximum, Minimum, Stretch; or one number, the maximum of everyone.',
     optional: false,
   },
   {
     name: 'duties',
-    description:
-      'What must be covered: columns Duty, Need, Priority, Slot and, by heading, Group; or one number, the need of every duty. ' +
-      'Left out, every duty in pairs needs one person.',
+    description: 'What must be covered: Duty, Need, Priority, Slot, by heading Group; or one number, the need of each. Left out: 1 each.',
     optional: true,
   },
   {

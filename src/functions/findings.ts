@@ -12,8 +12,7 @@ const COLUMNS = [
 
 export const FINDINGS: CaseFunction = {
   id: 'FINDINGS',
-  summary:
-    'Everything odd in the inputs: cells that cannot be read, rows given twice, names that are not listed and what they may mean.',
+  summary: 'Everything odd in the inputs: unreadable cells, repeated rows, and unlisted names with what they may mean.',
   parameters: CASE_PARAMETERS,
   columns: COLUMNS,
   example: '=DUTY.FINDINGS(Pairs, People, Duties, Rules)',

@@ -14,7 +14,7 @@ const COLUMNS = [
 
 export const GRID: CaseFunction = {
   id: 'GRID',
-  summary: 'The plan as a cross table: duties down, people across, a mark where the duty is held, totals on both edges.',
+  summary: 'The plan as a cross table: duties down, people across, a mark where held, totals on both edges.',
   parameters: CASE_PARAMETERS,
   columns: COLUMNS,
   example: '=DUTY.GRID(Pairs, People, Duties, Rules)',

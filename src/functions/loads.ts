@@ -19,8 +19,7 @@ const COLUMNS = [
 
 export const LOADS: CaseFunction = {
   id: 'LOADS',
-  summary:
-    'How much each person holds against their limits. Gain tells how many seats more could be covered if this person alone took one more.',
+  summary: 'What each person holds against their limits; Gain: seats more that could be covered if they took one more.',
   parameters: CASE_PARAMETERS,
   columns: COLUMNS,
   example: '=DUTY.LOADS(Pairs, People, Duties, Rules)',

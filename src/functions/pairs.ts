@@ -10,7 +10,7 @@ const COLUMNS = [
 
 export const PAIRS: RangeFunction = {
   id: 'PAIRS',
-  summary: 'A cross table of who may take what (duties down, people across) as a list of pairs, for the other functions to read.',
+  summary: 'A cross table of who may take what (duties down, people across) as the list of pairs the others read.',
   parameters: [
     {
       name: 'grid',

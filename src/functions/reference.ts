@@ -2,7 +2,7 @@ import type { CellFunction } from './declaration';
 import { NAMESPACE } from './registry';
 
 /** The call of a function as documentation writes it: optional parameters in brackets. */
-export function signature({ id, parameters }: CellFunction): string {
+function signature({ id, parameters }: CellFunction): string {
   const list = parameters.map(({ name, optional }) => (optional ? `[${name}]` : name)).join(', ');
   return `${NAMESPACE}.${id}(${list})`;
 }

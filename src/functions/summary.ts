@@ -10,7 +10,7 @@ const COLUMNS = [
 
 export const SUMMARY: CaseFunction = {
   id: 'SUMMARY',
-  summary: 'The case at a glance: seats needed, covered and uncovered, how the plan was found, and a fingerprint to compare.',
+  summary: 'The case at a glance: seats needed, covered and uncovered, how it was solved, a fingerprint to compare.',
   parameters: CASE_PARAMETERS,
   columns: COLUMNS,
   example: '=DUTY.SUMMARY(Pairs, People, Duties, Rules)',

@@ -15,7 +15,7 @@ const COLUMNS = [
 
 export const UNCOVERED: CaseFunction = {
   id: 'UNCOVERED',
-  summary: 'The duties that cannot be fully covered in the best plan, by how many seats they are short, and why.',
+  summary: 'The duties the best plan cannot fully cover, by how many seats they are short, and why.',
   parameters: CASE_PARAMETERS,
   columns: COLUMNS,
   example: '=DUTY.UNCOVERED(Pairs, People, Duties, Rules)',

@@ -25,7 +25,7 @@ export class MemoryWorkbook implements WorkbookPort {
   }
 
   select(address: string): Promise<void> {
-    this.selected = address;
+    if (this.#formulas.has(address)) this.selected = address;
     return Promise.resolve();
   }
 

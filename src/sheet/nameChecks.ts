@@ -57,24 +57,22 @@ export function findTwins(table: TableName, what: string, names: readonly string
   });
 }
 
-/** Duties that need someone and people with room whom no pair names. */
-export function findUnused(kase: Case, report: Report): void {
-  const dutyUsed = new Uint8Array(kase.duties.length);
-  const personUsed = new Uint8Array(kase.people.length);
-  for (let i = 0; i < kase.pairs.count; i++) {
-    dutyUsed[kase.pairs.duty[i]] = 1;
-    personUsed[kase.pairs.person[i]] = 1;
-  }
-  for (const { duty, person } of kase.fixed) {
-    dutyUsed[duty] = 1;
-    personUsed[person] = 1;
-  }
-  kase.duties.forEach(({ name, need }, d) => {
-    if (dutyUsed[d] === 0 && need > 0) report.find('Duties', null, 'Duty without pairs', `Nobody is listed in the pairs for "${name}".`);
+/** Duties that need someone and that no pair names. */
+export function findUnusedDuties({ duties, pairs, fixed }: Case, report: Report): void {
+  const used = new Set(fixed.map(({ duty }) => duty));
+  for (let i = 0; i < pairs.count; i++) used.add(pairs.duty[i]);
+  duties.forEach(({ name, need }, d) => {
+    if (used.has(d) || need === 0) return;
+    report.find('Duties', null, 'Duty without pairs', `Nobody is listed in the pairs for "${name}".`);
   });
-  kase.people.forEach(({ name, listed, maximum }, p) => {
-    if (personUsed[p] === 0 && listed && maximum > 0) {
-      report.find('People', null, 'Person without pairs', `"${name}" is listed for no duty in the pairs.`);
-    }
+}
+
+/** People of the table who have room and whom no pair names. */
+export function findUnusedPeople({ people, pairs, fixed }: Case, report: Report): void {
+  const used = new Set(fixed.map(({ person }) => person));
+  for (let i = 0; i < pairs.count; i++) used.add(pairs.person[i]);
+  people.forEach(({ name, listed, maximum }, p) => {
+    if (used.has(p) || !listed || maximum === 0) return;
+    report.find('People', null, 'Person without pairs', `"${name}" is listed for no duty in the pairs.`);
   });
 }

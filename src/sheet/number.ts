@@ -1,7 +1,7 @@
 import { isBlank } from './cell';
 
 /** The largest number any column takes. */
-export const LARGEST = 1_000_000;
+const LARGEST = 1_000_000;
 
 const WHOLE = /^\+?\d{1,7}(\.0*)?$/u;
 

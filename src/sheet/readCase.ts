@@ -4,7 +4,7 @@ import { caseRules } from './caseRules';
 import { makeDirectory, type Directory } from './directory';
 import { findFixedOddities } from './fixedChecks';
 import { Names } from './name';
-import { findStrays, findTwins, findUnused } from './nameChecks';
+import { findStrays, findTwins, findUnusedDuties, findUnusedPeople } from './nameChecks';
 import type { Range } from './range';
 import { plainDuty, readDuties, type DutiesTable } from './readDuties';
 import type { Reading } from './reading';
@@ -135,7 +135,8 @@ function findOddities(kase: Case, tables: Tables, report: Report): void {
     }
   }
   findFixedOddities(kase, report);
-  findUnused(kase, report);
+  findUnusedDuties(kase, report);
+  if (tables.peopleTable.kind === 'table') findUnusedPeople(kase, report);
   const keysOf = (entries: readonly { key: string }[]): string[] => entries.map(({ key }) => key);
   const namesOf = (entries: readonly { name: string }[]): string[] => entries.map(({ name }) => name);
   const listed = kase.people.filter((person) => person.listed);

@@ -2,8 +2,7 @@ import type { Spill } from './range';
 
 type Cell = string | number | boolean;
 
-/** Excel's limits: rows and columns of a sheet, characters of a cell. */
-export const SHEET_ROWS = 1_048_576;
+/** Excel's limits: columns of a sheet, characters of a cell. */
 export const SHEET_COLUMNS = 16_384;
 const CELL_CHARACTERS = 32_767;
 

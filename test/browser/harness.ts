@@ -4,7 +4,7 @@ import { chromium, type Browser, type Page } from 'playwright-core';
 import { findBrowser, QUIET_SWITCHES } from '../../scripts/browser.mjs';
 import { serve } from '../../scripts/serve.mjs';
 
-export const DIST = join(import.meta.dirname, '../../dist');
+const DIST = join(import.meta.dirname, '../../dist');
 
 /** A browser with the built pages served to it. */
 export interface Site {

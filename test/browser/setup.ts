@@ -2,7 +2,7 @@ import { execFileSync } from 'node:child_process';
 import { join } from 'node:path';
 
 /** Builds the pages once before the browser tests. */
-export default function setup(): void {
+export function setup(): void {
   const root = join(import.meta.dirname, '../..');
   execFileSync(process.execPath, [join(root, 'node_modules/webpack/bin/webpack.js'), '--mode', 'production', '--stats', 'errors-only'], {
     cwd: root,

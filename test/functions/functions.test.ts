@@ -163,8 +163,8 @@ describe('the memory of cases', () => {
 describe('every declaration', () => {
   it.each(FUNCTIONS)('of $id keeps the limits of the platform', (fn) => {
     expect(fn.id).toMatch(/^[A-Z][A-Z0-9._]{2,63}$/);
-    expect(fn.summary.length).toBeLessThanOrEqual(512);
-    for (const { description } of fn.parameters) expect(description.length).toBeLessThanOrEqual(512);
+    expect(fn.summary.length).toBeLessThanOrEqual(128);
+    for (const { description } of fn.parameters) expect(description.length).toBeLessThanOrEqual(128);
     expect(fn.example).toContain(`=DUTY.${fn.id}(`);
   });
 });

@@ -23,7 +23,7 @@ export interface Programme {
   readonly fixed: readonly (readonly [number, number])[];
 }
 
-export function programmeOf(spec: Spec): Programme {
+function programmeOf(spec: Spec): Programme {
   const fixed = spec.rules.flatMap((rule) => (rule.rule === 'Fixed' ? [[rule.duty, rule.person] as const] : []));
   const isFixed = (d: number, p: number): boolean => fixed.some(([fd, fp]) => fd === d && fp === p);
   const free = spec.pairs.filter(([d, p]) => !isFixed(d, p) && !spec.rules.some((rule) => forbids(spec, rule, d, p)));

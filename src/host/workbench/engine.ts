@@ -57,7 +57,8 @@ export interface EngineFunction {
 
 /** What is typed in a cell. */
 export interface EngineContent {
-  readonly content?: string;
+  readonly id: number;
+  readonly isFormula: boolean;
   readonly compiledFormula?: { toFormulaString(getters: EngineGetters): string };
 }
 
@@ -71,12 +72,15 @@ export interface EngineEvaluated {
 /** What a model tells. */
 export interface EngineGetters {
   getActiveSheetId(): string;
+  getActivePosition(): EnginePosition;
   getSheetIds(): readonly string[];
   getSheetName(sheetId: string): string;
   getSheetIdByName(name: string): string | undefined;
   isSheetVisible(sheetId: string): boolean;
   getNumberCols(sheetId: string): number;
   getNumberRows(sheetId: string): number;
+  getCells(sheetId: string): readonly EngineContent[];
+  getCellPosition(id: number): EnginePosition;
   getCell(position: EnginePosition): EngineContent | undefined;
   getEvaluatedCell(position: EnginePosition): EngineEvaluated;
   getSpreadZone(position: EnginePosition): EngineZone | undefined;

@@ -121,7 +121,8 @@ function fromEngineSheet(sheet: EngineSheet, data: EngineData, model: EngineMode
   const put = (row: number, column: number, formula: string | null, spill?: { rows: number; columns: number }): void => {
     const place = `${columnLetters(column)}${row + 1}`;
     const evaluated = getters.getEvaluatedCell({ sheetId: sheet.id, col: column, row });
-    const isError = evaluated.type === 'error';
+    // A typed error code is kept as it was typed; only a formula comes to an error.
+    const isError = evaluated.type === 'error' && formula !== null;
     cells.set(place, {
       row,
       column,
@@ -137,15 +138,15 @@ function fromEngineSheet(sheet: EngineSheet, data: EngineData, model: EngineMode
     const cell = parseCell(place);
     if (cell !== null) put(cell.row, cell.column, null);
   }
-  for (const [place, content] of Object.entries(sheet.cells)) {
-    const cell = parseCell(place);
-    if (cell === null) continue;
-    const zone = content.startsWith('=') ? getters.getSpreadZone({ sheetId: sheet.id, col: cell.column, row: cell.row }) : undefined;
-    for (let row = zone?.top ?? 0; zone !== undefined && row <= zone.bottom; row++) {
-      for (let column = zone.left; column <= zone.right; column++) put(row, column, null);
+  for (const { id, isFormula, compiledFormula } of getters.getCells(sheet.id)) {
+    const { col: column, row } = getters.getCellPosition(id);
+    const formula = isFormula ? (compiledFormula?.toFormulaString(getters) ?? null) : null;
+    const zone = isFormula ? getters.getSpreadZone({ sheetId: sheet.id, col: column, row }) : undefined;
+    for (let r = zone?.top ?? 0; zone !== undefined && r <= zone.bottom; r++) {
+      for (let c = zone.left; c <= zone.right; c++) put(r, c, null);
     }
     const spill = zone === undefined ? undefined : { rows: zone.bottom - zone.top + 1, columns: zone.right - zone.left + 1 };
-    put(cell.row, cell.column, content.startsWith('=') ? content : null, spill);
+    put(row, column, formula, spill);
   }
   return {
     name: sheet.name,

@@ -15,7 +15,8 @@ const FORBIDDEN = /[[\]:*?/\\]/gu;
  * @param taken names of sheets that are there already, in lower case; the new one is added
  */
 export function openCsv(fileName: string, text: string, taken: Set<string>): BookSheet {
-  const { data } = Papa.parse<string[]>(text.replace(/^\uFEFF/u, ''), { skipEmptyLines: false });
+  const plain = text.replace(/^\uFEFF/u, '');
+  const { data } = Papa.parse<string[]>(plain, { skipEmptyLines: false, delimiter: separatorOf(plain) });
   const cells: BookCell[] = [];
   data.forEach((values, row) => {
     values.forEach((value, column) => {
@@ -24,6 +25,13 @@ export function openCsv(fileName: string, text: string, taken: Set<string>): Boo
     });
   });
   return { name: sheetName(fileName, taken), hidden: false, cells, widths: widthsOf(cells), merges: [], frozen: { rows: 0, columns: 0 } };
+}
+
+/** The separator that occurs most in the first line, quoted parts aside: headings hold few of the others. */
+function separatorOf(text: string): string {
+  const firstLine = (/^[^\r\n]*/u.exec(text)?.[0] ?? '').replace(/"[^"]*"/gu, '');
+  const count = (separator: string): number => firstLine.split(separator).length;
+  return [',', ';', '\t', '|'].reduce((best, separator) => (count(separator) > count(best) ? separator : best));
 }
 
 /** The file's name without its ending, cut and numbered until it is a free sheet name. */

@@ -1,0 +1,1 @@
+export function demoBook(): Promise<unknown>;
