@@ -2,7 +2,6 @@
 import { createReadStream, statSync } from 'node:fs';
 import { createServer } from 'node:http';
 import { createServer as createSecureServer } from 'node:https';
-import { createServer as createSecureServer } from 'node:https';
 import { extname, join, normalize, sep } from 'node:path';
 
 const TYPES = {
@@ -42,13 +41,13 @@ const MORE_PORTS = 50;
  * Serves a folder on the loopback address.
  * @param {string} folder
  * @param {number} port the first port to try; 0 for any free one
- * @param {{ cert: string | Buffer, key: string | Buffer }} [secure] serves over https, and on exactly this port
+ * @param {{ cert: string | Buffer, key: string | Buffer }} [secure] serves over https
  * @returns {Promise<{ origin: string, close: () => Promise<void> }>}
  */
 export async function serve(folder, port, secure) {
   const respond = (request, response) => answer(folder, request, response);
   const server = secure === undefined ? createServer(respond) : createSecureServer(secure, respond);
-  const taken = await listen(server, port, secure === undefined ? port + MORE_PORTS : port);
+  const taken = await listen(server, port, port + MORE_PORTS);
   return {
     origin: `${secure === undefined ? 'http' : 'https'}://localhost:${taken}`,
     close: () => new Promise((resolve) => server.close(() => resolve())),
