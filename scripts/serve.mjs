@@ -41,13 +41,13 @@ const MORE_PORTS = 50;
  * Serves a folder on the loopback address.
  * @param {string} folder
  * @param {number} port the first port to try; 0 for any free one
- * @param {{ cert: string | Buffer, key: string | Buffer }} [secure] serves over https
+ * @param {{ cert: string | Buffer, key: string | Buffer }} [secure] serves over https, and on exactly this port
  * @returns {Promise<{ origin: string, close: () => Promise<void> }>}
  */
 export async function serve(folder, port, secure) {
   const respond = (request, response) => answer(folder, request, response);
   const server = secure === undefined ? createServer(respond) : createSecureServer(secure, respond);
-  const taken = await listen(server, port, port + MORE_PORTS);
+  const taken = await listen(server, port, secure === undefined ? port + MORE_PORTS : port);
   return {
     origin: `${secure === undefined ? 'http' : 'https'}://localhost:${taken}`,
     close: () => new Promise((resolve) => server.close(() => resolve())),

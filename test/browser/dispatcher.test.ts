@@ -51,7 +51,7 @@ beforeAll(async () => {
     Object.assign(window, { _richApiNativeBridge: bridge, sentToHost: sent });
   });
   await page.goto(`${site.origin}/pane.html?_host_Info=Excel$Win32$16.01$en-US$$$$0`);
-  await page.waitForFunction(() => '_richApiNativeBridge' in window && 'onMessageFromHost' in (window as never)._richApiNativeBridge);
+  await page.waitForFunction(() => 'onMessageFromHost' in (window as unknown as Record<string, object>)._richApiNativeBridge);
 });
 
 afterAll(() => site.close());
