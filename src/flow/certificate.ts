@@ -70,3 +70,28 @@ function shorten(faults: string[]): string[] {
   if (faults.length <= LISTED) return faults;
   return [...faults.slice(0, LISTED), `And ${faults.length - LISTED} faults more.`];
 }
+
+/**
+ * Faults in the claim that a flow is one of least cost among those that differ from it on open arcs
+ * only: by complementary slackness, an open arc with positive reduced cost must be empty and one with
+ * negative reduced cost full.
+ *
+ * @param potential for each node; a reduced cost is cost + potential[tail] - potential[head]
+ */
+export function leastCostFaults(
+  { tail, head, capacity }: ArcList,
+  flow: Int32Array,
+  cost: Float64Array,
+  potential: Float64Array,
+  isOpen: (arc: number) => boolean,
+): string[] {
+  const faults: string[] = [];
+  for (let a = 0; a < flow.length; a++) {
+    const reduced = cost[a] + potential[tail[a]] - potential[head[a]];
+    if (reduced > 0 && flow[a] !== 0 && isOpen(a)) faults.push(`Arc ${a} costs ${reduced} a unit too much and carries ${flow[a]}.`);
+    if (reduced < 0 && flow[a] !== capacity[a] && isOpen(a)) {
+      faults.push(`Arc ${a} saves ${-reduced} a unit and carries only ${flow[a]} of ${capacity[a]}.`);
+    }
+  }
+  return shorten(faults);
+}
