@@ -55,7 +55,7 @@ export default tseslint.config(
     files: ['**/*.mjs', '**/*.cjs'],
     languageOptions: {
       globals: Object.fromEntries(
-        ['process', 'console', 'URL', 'module', 'setTimeout', 'performance', 'Buffer', 'document', 'window'].map((name) => [name, 'readonly']),
+        ['process', 'console', 'URL', 'module', 'setTimeout', 'performance', 'Buffer', 'document', 'window', 'requestAnimationFrame'].map((name) => [name, 'readonly']),
       ),
     },
   },

@@ -17,6 +17,9 @@ function folderOf(name) {
   return dirname(file);
 }
 
+/** What the pages are made of besides our own code; the texts of their licences are served with them. */
+const LICENSED = ['@odoo/o-spreadsheet', '@odoo/owl', 'bootstrap', 'hucre', 'lit-html', '@noble/hashes', 'papaparse'];
+
 /** Writes what is derived from the declarations of the functions. */
 class DerivedFiles {
   apply(compiler) {
@@ -78,10 +81,12 @@ const workbench = {
           info: { minimized: true },
         })),
         { from: join(folderOf('bootstrap'), 'dist/css/bootstrap-utilities.min.css'), to: 'vendor/[name][ext]' },
-        { from: join(folderOf('bootstrap'), 'LICENSE'), to: 'vendor/bootstrap-LICENSE.txt', toType: 'file' },
-        { from: join(folderOf('@odoo/o-spreadsheet'), 'LICENSE'), to: 'vendor/o-spreadsheet-LICENSE.txt', toType: 'file' },
         { from: join(folderOf('@odoo/owl'), 'dist', 'owl.iife.min.js'), to: 'vendor/[name][ext]', info: { minimized: true } },
-        { from: join(folderOf('@odoo/owl'), 'LICENSE'), to: 'vendor/owl-LICENSE.txt', toType: 'file', noErrorOnMissing: true },
+        ...LICENSED.map((name) => ({
+          from: join(ROOT, 'node_modules', name, 'LICENSE'),
+          to: `vendor/${name.split('/').at(-1)}-LICENSE.txt`,
+          toType: 'file',
+        })),
       ],
     }),
   ],

@@ -1,1 +1,4 @@
-export function demoBook(): Promise<unknown>;
+import type { Book } from '../src/workbench/files/book';
+
+export function demoBook(): Promise<Book>;
+export function demoFile(): Promise<Uint8Array>;

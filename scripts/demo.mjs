@@ -1,23 +1,39 @@
-// Writes assets/demo.xlsx: the scenario as input sheets, and our functions' answers with the values they have today.
+// Writes assets/demo.xlsx: the scenario on an input sheet, and our functions' answers with the values they have today.
 import { writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { scenario } from './demo-scenario.mjs';
 import { loadTypeScript, ROOT } from './load.mjs';
 
-const WIDTHS = { Pairs: [190, 170], People: [170, 90], Duties: [190, 60, 70, 100, 70], Rules: [80, 190, 170, 110] };
-const HEADING = { bold: true, fill: '#e3efe9' };
+/** The same file each time: it says it was written on this day. */
+const WRITTEN = new Date('2026-01-05T09:00:00Z');
+
+/** The input tables beside each other, as they are given to the functions, and how wide their columns are in pixels. */
+const TABLES = [
+  { name: 'Duties', title: 'Duties to cover', widths: [200, 60, 75, 100, 70] },
+  { name: 'People', title: 'People and maximums', widths: [170, 90] },
+  { name: 'Pairs', title: 'Pairs: who may take what', widths: [200, 170] },
+  { name: 'Rules', title: 'Rules: exceptions', widths: [80, 190, 170, 110] },
+];
+const PARAMETERS = ['Pairs', 'People', 'Duties', 'Rules'];
+/** Blank rows below each table that its name takes in, so that rows can be added. */
+const ROOM = 20;
+const TITLE_ROW = 0;
+const HEADING_ROW = 1;
 
 /** @returns {Promise<any>} the demo as a book */
 export async function demoBook() {
-  const [{ answerSheets }, { invoke }, { Journal }, { FUNCTIONS }] = await Promise.all(
-    ['src/workbench/answerSheets.ts', 'src/functions/invoke.ts', 'src/functions/journal.ts', 'src/functions/registry.ts'].map(
-      loadTypeScript,
-    ),
+  const [sheets, { invoke }, { Journal }, { FUNCTIONS }, { columnLetters }] = await Promise.all(
+    [
+      'src/workbench/answerSheets.ts',
+      'src/functions/invoke.ts',
+      'src/functions/journal.ts',
+      'src/functions/registry.ts',
+      'src/host/address.ts',
+    ].map(loadTypeScript),
   );
   const tables = scenario();
-  const inputs = { name: 'x', sheets: Object.entries(tables).map(([name, rows]) => inputSheet(name, rows)), names: [], lost: [] };
-  const book = answerSheets(inputs);
-  const ranges = [tables.Pairs, tables.People, tables.Duties, tables.Rules];
+  const { sheet, names } = inputSheet(tables, sheets, columnLetters);
+  const ranges = PARAMETERS.map((name) => tables[name]);
   const journal = new Journal();
   const answer = (formula) => {
     const fn = FUNCTIONS.find(({ id }) => formula.startsWith(`=DUTY.${id}(`));
@@ -25,43 +41,63 @@ export async function demoBook() {
     if (result.kind === 'fault') throw new Error(result.message);
     return result.spill;
   };
-  return { ...book, sheets: book.sheets.map((sheet) => ({ ...sheet, cells: sheet.cells.flatMap((cell) => withValues(cell, answer)) })) };
+  const results = [sheets.resultsSheet('Results', PARAMETERS), sheets.gridSheet('Grid', PARAMETERS, tables.People.length - 1)];
+  return { sheets: [sheet, ...results.map((empty) => withAnswers(empty, answer))], names, lost: [] };
 }
 
-function inputSheet(name, rows) {
-  const cells = rows.flatMap((values, row) =>
-    values.flatMap((value, column) =>
-      value === '' ? [] : [{ row, column, formula: null, value, style: row === 0 ? HEADING : null, format: null }],
-    ),
-  );
-  return {
-    name,
-    hidden: false,
-    cells,
-    widths: new Map(WIDTHS[name].map((width, column) => [column, width])),
-    merges: [],
-    frozen: { rows: 1, columns: 0 },
-  };
+/** The input sheet, and the names of its tables. */
+function inputSheet(tables, { HEADING, TITLE }, columnLetters) {
+  const cells = [];
+  const names = [];
+  const widths = new Map();
+  let left = 0;
+  for (const { name, title, widths: own } of TABLES) {
+    const rows = tables[name];
+    cells.push({ row: TITLE_ROW, column: left, formula: null, value: title, style: TITLE, format: null });
+    rows.forEach((values, i) => {
+      values.forEach((value, j) => {
+        if (value === '') return;
+        cells.push({ row: HEADING_ROW + i, column: left + j, formula: null, value, style: i === 0 ? HEADING : null, format: null });
+      });
+    });
+    own.forEach((width, j) => widths.set(left + j, width));
+    widths.set(left + own.length, 30);
+    const last = `${columnLetters(left + own.length - 1)}${HEADING_ROW + rows.length + ROOM}`;
+    names.push({ name, reference: `Inputs!${columnLetters(left)}${HEADING_ROW + 1}:${last}` });
+    left += own.length + 1;
+  }
+  return { sheet: { name: 'Inputs', hidden: false, cells, widths, merges: [], frozen: { rows: 2, columns: 0 } }, names };
 }
 
-/** A formula's cell with its value, and the cells it fills with theirs. */
-function withValues(cell, answer) {
-  if (cell.formula === null) return cell.value === null ? [] : [cell];
-  const spill = answer(cell.formula);
-  return spill.flatMap((row, r) =>
-    row.map((value, c) => {
-      const here = { row: cell.row + r, column: cell.column + c, value, style: r === 0 ? HEADING : null, format: null };
-      if (r > 0 || c > 0) return { ...here, formula: null };
-      return { ...here, formula: cell.formula, spill: { rows: spill.length, columns: spill[0].length } };
-    }),
-  );
+/** A sheet with the values of its formulas, and the cells they fill with theirs. */
+function withAnswers(sheet, answer) {
+  const cells = new Map(sheet.cells.map((cell) => [`${cell.row},${cell.column}`, cell]));
+  for (const { row, column, formula } of sheet.cells) {
+    if (formula === null) continue;
+    const spill = answer(formula);
+    spill.forEach((values, i) => {
+      values.forEach((value, j) => {
+        const key = `${row + i},${column + j}`;
+        const blank = { row: row + i, column: column + j, formula: null, style: null, format: null };
+        cells.set(key, { ...(cells.get(key) ?? blank), value });
+      });
+    });
+    const first = `${row},${column}`;
+    cells.set(first, { ...cells.get(first), spill: { rows: spill.length, columns: spill[0].length } });
+  }
+  return { ...sheet, cells: [...cells.values()] };
+}
+
+/** @returns {Promise<Uint8Array>} the demo as a file */
+export async function demoFile() {
+  const { saveXlsx } = await loadTypeScript('src/workbench/files/saveXlsx.ts');
+  return saveXlsx(await demoBook(), WRITTEN);
 }
 
 if (process.argv[1] === join(ROOT, 'scripts/demo.mjs')) {
-  const { saveXlsx } = await loadTypeScript('src/workbench/files/saveXlsx.ts');
-  const book = await demoBook();
   const file = join(ROOT, 'assets/demo.xlsx');
-  writeFileSync(file, await saveXlsx(book));
-  const summary = book.sheets.find(({ name }) => name === 'Results').cells.filter(({ column }) => column < 2).map(({ value }) => value);
-  console.log(`Wrote ${file}: ${summary.slice(1, 9).join(' ')}`);
+  writeFileSync(file, await demoFile());
+  const [, results] = (await demoBook()).sheets;
+  const summary = results.cells.filter(({ row, column }) => row > 1 && row < 5 && column < 2).sort((a, b) => a.row - b.row || a.column - b.column);
+  console.log(`Wrote ${file}: ${summary.map(({ value }) => value).join(' ')}`);
 }

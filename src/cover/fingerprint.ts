@@ -40,8 +40,8 @@ function* parts(kase: Case): Generator<string> {
   const dutyRank = rankOf(kase.dutyOrder);
   const personRank = rankOf(kase.personOrder);
   for (const d of kase.dutyOrder) {
-    const { key, need, priority, slots, groups } = duties[d];
-    yield JSON.stringify(['duty', key, need, priority, [...slots].sort(), [...groups].sort()]);
+    const { key, need, priority, slots, groups, times, load } = duties[d];
+    yield JSON.stringify(['duty', key, need, priority, slots, groups, times, load]);
   }
   for (const p of kase.personOrder) {
     const { key, maximum, minimum, stretch, carried, listed } = people[p];
@@ -50,8 +50,13 @@ function* parts(kase: Case): Generator<string> {
   for (let i = 0; i < pairs.count; i++) {
     yield `${dutyRank[pairs.duty[i]]},${personRank[pairs.person[i]]},${pairs.rank[i]};`;
   }
-  for (const { duty, person } of kase.fixed) yield `fixed ${dutyRank[duty]},${personRank[person]};`;
-  for (const { duty, person } of kase.barred) yield `barred ${dutyRank[duty]},${personRank[person]};`;
+  for (const [word, seats] of [['fixed', kase.fixed], ['barred', kase.barred], ['current', kase.current ?? []]] as const) {
+    for (const { duty, person } of seats) yield `${word} ${dutyRank[duty]},${personRank[person]};`;
+  }
+  for (const [word, two] of [['clash', kase.clashes], ['together', kase.together]] as const) {
+    for (const [one, other] of two) yield `${word} ${dutyRank[one]},${dutyRank[other]};`;
+  }
+  yield JSON.stringify([kase.order, kase.prices, kase.rest, kase.seconds, kase.current === null]);
   for (const { person, label } of kase.away) yield JSON.stringify(['away', personRank[person], label.key]);
   for (const { person, label, most } of kase.limits) {
     yield JSON.stringify(['limit', label.key, person === null ? null : personRank[person], most]);

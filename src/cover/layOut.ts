@@ -25,7 +25,8 @@ export function layOut(kase: Case, open: OpenPairs, openPair: Int32Array, nestin
     return { priority, node, arc: arcs.add(SOURCE, node, classNeed[c]) };
   });
 
-  for (const d of kase.dutyOrder) arcs.add(classes[classOfDuty[d]].node, nodes.duty[d], needLeft[d]);
+  const dutyArc = new Int32Array(kase.duties.length);
+  for (const d of kase.dutyOrder) dutyArc[d] = arcs.add(classes[classOfDuty[d]].node, nodes.duty[d], needLeft[d]);
   const firstPairArc = arcs.count;
   openPair.forEach((i, k) => {
     const person = kase.pairs.person[i];
@@ -52,6 +53,7 @@ export function layOut(kase: Case, open: OpenPairs, openPair: Int32Array, nestin
     classes,
     classOfDuty,
     dutyNode: nodes.duty,
+    dutyArc,
     personNode: nodes.person,
     personArc,
     firstPairArc,

@@ -26,6 +26,8 @@ export interface Reduction {
   readonly classOfDuty: Int32Array;
   /** The node of each duty, by duty number. */
   readonly dutyNode: Int32Array;
+  /** The arc from each duty's class, by duty number. */
+  readonly dutyArc: Int32Array;
   /** The root of each person's limits, by person number. */
   readonly personNode: Int32Array;
   /** The arc from each person's root to the sink, by person number. */

@@ -17,8 +17,10 @@ export interface Shortage {
   readonly listed: number;
   readonly barred: number;
   readonly away: number;
-  /** The knot it is part of; null where no open pair names the duty. */
-  readonly knot: Knot | null;
+  /** People who may take it beside their Fixed duties, if only they had a place left. */
+  readonly open: number;
+  /** The knot it is part of. */
+  readonly knot: Knot;
 }
 
 /**
@@ -45,8 +47,9 @@ export function shortages(kase: Case, { reduction, residual, plan }: Solution): 
   return short.map((duty) => {
     const { listed, barred, away, open, fixed } = counts.get(duty)!;
     const eligible = fixed + listed - barred - away;
-    const knot = open > 0 ? (knotOf.get(duty) ?? null) : null;
-    return { duty, short: kase.duties[duty].need - plan.heldOfDuty[duty], eligible, listed, barred, away, knot };
+    // A short duty is reached from the source, so it is in a knot, if only by itself.
+    const knot = knotOf.get(duty)!;
+    return { duty, short: kase.duties[duty].need - plan.heldOfDuty[duty], eligible, listed, barred, away, open, knot };
   });
 }
 

@@ -1,5 +1,6 @@
 import type { Case } from './case';
 import { coverBest, readPlan } from './coverBest';
+import { improve } from './improve';
 import type { Plan } from './plan';
 import { coverFaults } from './proof';
 import { reduce, type NotNested, type Reduction } from './reduce';
@@ -10,7 +11,7 @@ export interface Solution {
   /** Residual capacities over the half arcs of the reduction's network. */
   readonly residual: Int32Array;
   readonly plan: Plan;
-  /** Faults found in the proof that no plan covers more; empty: proven. */
+  /** Faults found in the proof that no plan is better, in cover or in any later aim; empty: proven. */
   readonly faults: readonly string[];
 }
 
@@ -19,10 +20,11 @@ export function solve(kase: Case): Solution | NotNested {
   const reduction = reduce(kase);
   if ('crossing' in reduction) return reduction;
   const residual = coverBest(reduction);
+  const faults = improve(kase, reduction, residual);
   return {
     reduction,
     residual,
     plan: readPlan(kase, reduction, residual),
-    faults: coverFaults(reduction, residual),
+    faults: [...coverFaults(reduction, residual), ...faults],
   };
 }

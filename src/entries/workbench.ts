@@ -5,7 +5,11 @@ import { registerInEngine } from '../host/workbench/register';
 import { WorkbenchWorkbook } from '../host/workbench/workbook';
 import { mountPane } from '../pane/mount';
 import { Desk } from '../workbench/desk';
+import { makeDivider } from '../workbench/divider';
+import { listenForKeys } from '../workbench/keys';
+import { Menu } from '../workbench/menu';
 import { Notice } from '../workbench/notice';
+import { listenForMenus } from '../workbench/sheetMenus';
 
 /** The engine and its component library: separate files, loaded before this one. */
 declare const o_spreadsheet: Engine;
@@ -23,58 +27,110 @@ declare global {
 void start();
 
 async function start(): Promise<void> {
+  // The engine tells the console about every step it takes.
+  console.debug = () => undefined;
   const journal = new Journal();
   registerInEngine(o_spreadsheet, FUNCTIONS, journal);
+  leaveOutMenus(o_spreadsheet);
   const workbook = new WorkbenchWorkbook(new o_spreadsheet.Model({}));
-  const templates = await (await fetch('vendor/o_spreadsheet.xml')).text();
   const notice = new Notice(element('notice'));
-  const desk = new Desk(o_spreadsheet, workbook, drawer(element('grid'), templates), notice, element('file-name'));
+  const grid = element('grid');
+  const templates = await (await fetch('vendor/o_spreadsheet.xml')).text();
+  const draw = drawer(grid, templates, notice);
+  const desk = new Desk({ engine: o_spreadsheet, workbook, draw, notice, fileName: element('file-name') });
+  listen(desk, () => draw(workbook.model));
+  listenForMenus(grid, new Menu(element('menu'), () => focusGrid(grid)), () => workbook.model);
 
   const paneRoot = document.createElement('div');
   paneRoot.style.height = '100%';
   element('pane').attachShadow({ mode: 'open' }).append(paneRoot);
   mountPane(paneRoot, workbook, journal);
-  listen(desk);
+  makeDivider(element('divider'), element('pane'));
   window.dutyproof = { workbook, journal };
   await desk.openDemo();
 }
 
+/** The menus of the sheet are ours. */
+function leaveOutMenus({ registries }: Engine): void {
+  for (const registry of [registries.cellMenuRegistry, registries.rowMenuRegistry, registries.colMenuRegistry]) {
+    for (const name of [...registry.getKeys()]) registry.remove(name);
+  }
+}
+
 /** Draws a model in place of the one before. */
-function drawer(grid: HTMLElement, templates: string): (model: EngineModel) => void {
+function drawer(grid: HTMLElement, templates: string, notice: Notice): (model: EngineModel) => void {
   let app: { destroy(): void } | null = null;
   return (model) => {
     app?.destroy();
     grid.replaceChildren();
-    const next = new owl.App(o_spreadsheet.Spreadsheet, { props: { model }, templates });
+    const props = {
+      model,
+      colorScheme: prefersDark().matches ? 'dark' : 'light',
+      notifyUser: ({ text }: { text: string }) => notice.show(text),
+      raiseError: (text: string, next?: () => void) => {
+        notice.show(text);
+        next?.();
+      },
+      askConfirmation: (text: string, confirm: () => void) => notice.show(text, [{ label: 'Go ahead', run: confirm }]),
+    };
+    const next = new owl.App(o_spreadsheet.Spreadsheet, { props, templates });
     app = next;
     void next.mount(grid);
   };
 }
 
-function listen(desk: Desk): void {
+function listen(desk: Desk, redraw: () => void): void {
   const files = element('files') as HTMLInputElement;
-  element('open').addEventListener('click', () => files.click());
+  const open = (): void => files.click();
+  const save = (): void => desk.save();
+  element('open').addEventListener('click', open);
   files.addEventListener('change', () => {
     void desk.open([...(files.files ?? [])]);
     files.value = '';
   });
-  element('save').addEventListener('click', () => desk.save());
+  element('save').addEventListener('click', save);
   element('demo').addEventListener('click', () => void desk.openDemo());
   element('licences').addEventListener('click', () => (element('licence-dialog') as HTMLDialogElement).showModal());
+  listenForKeys({ open, save, nextPart });
+  prefersDark().addEventListener('change', redraw);
+  window.addEventListener('beforeunload', (event) => {
+    if (desk.isChanged) event.preventDefault();
+  });
+  listenForDrops(desk);
+}
 
-  const desktop = document.querySelector<HTMLElement>('.wb-desk')!;
+function listenForDrops(desk: Desk): void {
   document.addEventListener('dragover', (event) => {
+    if (event.dataTransfer?.types.includes('Files') !== true) return;
     event.preventDefault();
-    desktop.classList.add('wb-dropping');
+    document.body.classList.add('wb-dropping');
   });
   document.addEventListener('dragleave', (event) => {
-    if (event.relatedTarget === null) desktop.classList.remove('wb-dropping');
+    if (event.relatedTarget === null) document.body.classList.remove('wb-dropping');
   });
   document.addEventListener('drop', (event) => {
+    document.body.classList.remove('wb-dropping');
+    if (event.dataTransfer?.types.includes('Files') !== true) return;
     event.preventDefault();
-    desktop.classList.remove('wb-dropping');
-    void desk.open([...(event.dataTransfer?.files ?? [])]);
+    void desk.open([...event.dataTransfer.files]);
   });
+}
+
+/** From the sheet to the pane, to the bar, and back to the sheet. */
+function nextPart(): void {
+  const grid = element('grid');
+  const pane = element('pane');
+  if (grid.contains(document.activeElement)) pane.shadowRoot?.querySelector<HTMLElement>('button')?.focus();
+  else if (document.activeElement === pane) element('open').focus();
+  else focusGrid(grid);
+}
+
+function focusGrid(grid: HTMLElement): void {
+  grid.querySelector<HTMLElement>('.o-grid .o-composer')?.focus();
+}
+
+function prefersDark(): MediaQueryList {
+  return matchMedia('(prefers-color-scheme: dark)');
 }
 
 function element(id: string): HTMLElement {

@@ -14,7 +14,7 @@ const COLUMNS = [
   { name: 'Spare', description: 'places left' },
   { name: 'Gain', description: 'seats more that could be covered if this person alone took one more' },
   { name: 'Duties', description: 'what they hold, separated by semicolons' },
-  { name: 'Note', description: 'over the maximum by Fixed rows; not in the people table' },
+  { name: 'Note', description: 'over the maximum by Fixed rows; below the minimum, and why; not in the people table' },
 ];
 
 export const LOADS: CaseFunction = {
@@ -31,19 +31,30 @@ function loads(solved: Solved): Spill {
   const { reduction, residual, plan } = solved.solution;
   const gain = gains(reduction, residual);
   const held = dutiesByPerson(kase, plan);
+  const mayTake = reduction.open.fixedByPerson.slice();
+  for (const i of reduction.openPair) mayTake[kase.pairs.person[i]]++;
   const rows = kase.people.map((person, p) => {
     const { name, minimum, maximum } = person;
     const assigned = plan.heldByPerson[p];
     const spare = Math.max(0, maximum - assigned);
     const duties = joinNames(held[p].map((d) => kase.duties[d].name));
-    return [name, assigned, minimum, maximum, spare, gain[p], duties, note(person, assigned)];
+    return [name, assigned, minimum, maximum, spare, gain[p], duties, note(person, assigned, mayTake[p])];
   });
   return writeTable(headings(COLUMNS), rows, 'No people');
 }
 
-function note({ maximum, listed }: Person, assigned: number): string {
+/** What is remarkable about what a person holds. */
+function note({ minimum, maximum, listed }: Person, assigned: number, mayTake: number): string {
   const notes: string[] = [];
   if (!listed) notes.push('Not in the people table, so the maximum is 0.');
   if (assigned > maximum) notes.push(`Over the maximum by ${assigned - maximum}: Fixed rows say so.`);
+  if (assigned < minimum) notes.push(`Below the minimum by ${minimum - assigned}: ${whyBelow(minimum, maximum, mayTake)}`);
   return notes.join(' ');
+}
+
+/** Since the shortfall of minimums is the least possible, one of these holds for everyone below theirs. */
+function whyBelow(minimum: number, maximum: number, mayTake: number): string {
+  if (maximum < minimum) return `the maximum is ${maximum}.`;
+  if (mayTake < minimum) return `only ${mayTake} ${mayTake === 1 ? 'duty is' : 'duties are'} open to them.`;
+  return 'no duty can pass to them from anyone who is above their own minimum, and none is left uncovered that they could take.';
 }

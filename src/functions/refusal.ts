@@ -13,9 +13,10 @@ export class Refusal extends Error {
 /** @returns a refusal that names the first such feature and how to go on without it; null where there is none */
 export function refusalOf(features: readonly UsedFeature[]): Refusal | null {
   if (features.length === 0) return null;
-  const [{ feature, table }] = features;
+  const [{ feature, table, row }] = features;
+  const where = row === null ? `${table} table` : `${table} table, row ${row} of the range`;
   return new Refusal(
-    `${table} table: ${feature} is not taken into account by this version, and an answer that ignored it ` +
+    `${where}: ${feature} is not taken into account by this version, and an answer that ignored it ` +
       'would be wrong. Clear it to get an answer without it.',
   );
 }

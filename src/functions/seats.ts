@@ -18,3 +18,11 @@ function groupSeats(plan: Plan, count: number, groupOf: (seat: Seat) => number):
   for (const seat of plan.seats) groups[groupOf(seat)].push(seat);
   return groups;
 }
+
+/** The rank of a seat: that of its pair; '' where the pairs have no ranks or do not list it. */
+export function rankLookUp({ pairs, people, ranked }: Case): (seat: Seat) => number | '' {
+  if (!ranked) return () => '';
+  const ranks = new Map<number, number>();
+  for (let i = 0; i < pairs.count; i++) ranks.set(pairs.duty[i] * people.length + pairs.person[i], pairs.rank[i]);
+  return ({ duty, person }) => ranks.get(duty * people.length + person) ?? '';
+}

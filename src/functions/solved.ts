@@ -61,7 +61,7 @@ export class Solved {
 
   #solve(): Solution | Error {
     const kase = this.case;
-    const refusal = refusalOf(usedFeatures(kase));
+    const refusal = refusalOf(usedFeatures(kase, this.reading.featureRows));
     if (refusal !== null) return refusal;
     const solution = solve(kase);
     return 'crossing' in solution ? new Refusal(crossingMessage(kase, solution)) : solution;

@@ -1,6 +1,7 @@
 import { writeTable } from '../sheet/write';
 import type { Spill } from '../sheet/range';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
+import { currentKept, minimumsMissed, rankTotal } from './measures';
 import type { Solved } from './solved';
 
 const COLUMNS = [
@@ -18,15 +19,16 @@ export const SUMMARY: CaseFunction = {
 };
 
 function summary(solved: Solved): Spill {
+  const kase = solved.case;
   const { plan, faults } = solved.solution;
   const rows: (readonly [string, string | number])[] = [
     ['Seats needed', plan.needed],
     ['Seats covered', plan.covered],
     ['Seats uncovered', plan.needed - plan.covered],
     ['People used', plan.heldByPerson.reduce((used, held) => used + (held > 0 ? 1 : 0), 0)],
-    ['Minimums missed', 0],
-    ['Current kept', 'no current plan given'],
-    ['Rank total', 'no ranks given'],
+    ['Minimums missed', minimumsMissed(kase, plan)],
+    ['Current kept', kase.current === null ? 'no current plan given' : currentKept(kase, plan)],
+    ['Rank total', kase.ranked ? rankTotal(kase, plan) : 'no ranks given'],
     ['Method', 'flow'],
     ['Proven', faults.length === 0 ? 'proven best' : `not proven: ${faults[0]}`],
     ['Findings', solved.reading.findings.length],

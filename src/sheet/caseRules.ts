@@ -1,10 +1,10 @@
 import { DEFAULT_ORDER, type Away, type Case, type Limit, type Seat } from '../cover/case';
 import { quote } from './cell';
-import { lookUp, type Directory } from './directory';
+import { lookUp } from './directory';
 import { nameKey } from './name';
-import { NearMisses } from './nearMiss';
 import type { Rule } from './readRules';
 import type { Report } from './report';
+import { findRuleOddities, knownRules, type Context } from './ruleNames';
 
 /** The part of a case that the rules table says. */
 export type CaseRules = Pick<
@@ -12,90 +12,70 @@ export type CaseRules = Pick<
   'fixed' | 'barred' | 'away' | 'limits' | 'clashes' | 'together' | 'rest' | 'order' | 'prices' | 'seconds'
 >;
 
-/** What rules refer to. */
-export interface Context {
-  readonly duties: Directory;
-  readonly people: Directory;
-  /** Slots and groups: key to first spelling. */
-  readonly labels: ReadonlyMap<string, string>;
-}
-
 const DEFAULT_SECONDS = 20;
 
-/** Turns rules into what they mean for the case. Rules about unknown names have no effect and are found. */
-export function caseRules(rules: readonly Rule[], context: Context, report: Report): CaseRules {
-  const known = rules.filter(knownOnly(context, report));
+/** A Fixed or Barred seat and the row of the rules that gives it. */
+export type SeatOfRow = Seat & { readonly row: number };
+
+/**
+ * Turns rules into what they mean for the case. Rules about unknown names have no effect and are found.
+ *
+ * @returns also the Fixed seats with their rows, for what is to be said of them
+ */
+export function caseRules(
+  rules: readonly Rule[],
+  context: Context,
+  report: Report,
+): { rules: CaseRules; fixedRows: readonly SeatOfRow[] } {
+  const known = knownRules(rules, context, report);
+  findRuleOddities(known, context, report);
   const of = <W extends Rule['word']>(word: W): Extract<Rule, { word: W }>[] =>
     known.filter((rule): rule is Extract<Rule, { word: W }> => rule.word === word);
-  const barred = seats(of('Barred'), context, report);
+  const barred = seats(of('Barred'), context);
+  const fixedRows = withoutBarred(seats(of('Fixed'), context), barred, context, report);
   return {
-    fixed: withoutBarred(seats(of('Fixed'), context, report), barred, context, report),
-    barred: barred.map(({ duty, person }) => ({ duty, person })),
-    away: awayOf(of('Away'), context),
-    limits: limitsOf(of('Limit'), context),
-    clashes: dutyPairs(of('Clash'), context),
-    together: dutyPairs(of('Together'), context),
-    rest: Math.max(0, ...of('Rest').map(({ minutes }) => minutes)),
-    seconds: Math.min(...(of('Seconds').length > 0 ? of('Seconds').map(({ seconds }) => seconds) : [DEFAULT_SECONDS])),
-    order: oneOrder(of('Order'), report),
-    prices: { place: priceOf(of('Price'), 'place', 1), eligibility: priceOf(of('Price'), 'eligibility', 2) },
+    fixedRows,
+    rules: {
+      fixed: fixedRows.map(({ duty, person }) => ({ duty, person })),
+      barred: barred.map(({ duty, person }) => ({ duty, person })),
+      away: awayOf(of('Away'), context),
+      limits: limitsOf(of('Limit'), context),
+      clashes: dutyPairs(of('Clash'), context),
+      together: dutyPairs(of('Together'), context),
+      rest: of('Rest').reduce((most, { minutes }) => Math.max(most, minutes), 0),
+      seconds: secondsOf(of('Seconds')),
+      order: oneOrder(of('Order'), report),
+      prices: { place: priceOf(of('Price'), 'place', 1), eligibility: priceOf(of('Price'), 'eligibility', 2) },
+    },
   };
 }
 
 type SeatRule = Extract<Rule, { word: 'Fixed' | 'Barred' }>;
 type TwoDuties = Extract<Rule, { word: 'Clash' | 'Together' }>;
-type SeatOfRow = Seat & { readonly row: number };
 
-/** True for a rule all of whose names are known; the others are found, with what they may mean. */
-function knownOnly({ duties, people, labels }: Context, report: Report): (rule: Rule) => boolean {
-  const listed = ({ names, fromCase }: Directory): string[] => Array.from(fromCase, (number) => names.names[number]);
-  const candidates = {
-    duty: () => listed(duties),
-    person: () => listed(people),
-    'slot or group': () => [...labels.values()],
-  };
-  return (rule) => {
-    const unknown = (kind: keyof typeof candidates, text: string): boolean => {
-      const where = kind === 'slot or group' ? 'in the duties table' : `among the ${kind === 'duty' ? 'duties' : 'people'}`;
-      report.find(
-        'Rules',
-        rule.row,
-        `Unknown ${kind}`,
-        `${rule.word} has no effect: ${quote(text)} is not ${where}.${new NearMisses(candidates[kind]()).question(text)}`,
-      );
-      return false;
-    };
-    if ('duty' in rule && lookUp(duties, rule.duty) === -1) return unknown('duty', rule.duty);
-    if ('other' in rule && lookUp(duties, rule.other) === -1) return unknown('duty', rule.other);
-    if ('label' in rule && !labels.has(nameKey(rule.label))) return unknown('slot or group', rule.label);
-    if ('person' in rule && rule.person !== '' && lookUp(people, rule.person) === -1) return unknown('person', rule.person);
-    return true;
-  };
-}
-
-/** Seats sorted like pairs, each once. */
-function seats(rules: readonly SeatRule[], { duties, people }: Context, report: Report): SeatOfRow[] {
-  const firstRow = new Map<string, SeatOfRow>();
+/** Seats sorted like pairs, each once, with the first row that gives them. */
+function seats(rules: readonly SeatRule[], { duties, people }: Context): SeatOfRow[] {
+  const unique = new Map<number, SeatOfRow>();
   for (const rule of rules) {
-    const duty = lookUp(duties, rule.duty);
-    const person = lookUp(people, rule.person);
-    const earlier = firstRow.get(`${duty} ${person}`);
-    if (earlier === undefined) firstRow.set(`${duty} ${person}`, { duty, person, row: rule.row });
-    else report.find('Rules', rule.row, 'Row given twice', `The same ${rule.word} rule stands in row ${earlier.row} already.`);
+    const seat = { duty: lookUp(duties, rule.duty), person: lookUp(people, rule.person), row: rule.row };
+    const key = seat.duty * people.order.length + seat.person;
+    if (!unique.has(key)) unique.set(key, seat);
   }
-  return [...firstRow.values()].sort(
+  return [...unique.values()].sort(
     (a, b) => duties.rank[a.duty] - duties.rank[b.duty] || people.rank[a.person] - people.rank[b.person],
   );
 }
 
 /** Where both rules name one pair, "never" is the safer reading. */
-function withoutBarred(fixed: readonly SeatOfRow[], barred: readonly SeatOfRow[], context: Context, report: Report): Seat[] {
-  return fixed.flatMap(({ duty, person, row }) => {
-    const against = barred.find((seat) => seat.duty === duty && seat.person === person);
-    if (against === undefined) return [{ duty, person }];
-    const name = context.people.names.names[context.people.fromCase[person]];
-    report.find('Rules', row, 'Fixed and Barred', `Row ${against.row} bars ${name} from this duty; Barred is kept, Fixed is not.`);
-    return [];
+function withoutBarred(fixed: readonly SeatOfRow[], barred: readonly SeatOfRow[], context: Context, report: Report): SeatOfRow[] {
+  const { names, fromCase, order } = context.people;
+  const barredRow = new Map(barred.map(({ duty, person, row }) => [duty * order.length + person, row]));
+  return fixed.filter(({ duty, person, row }) => {
+    const against = barredRow.get(duty * order.length + person);
+    if (against === undefined) return true;
+    const name = names.names[fromCase[person]];
+    report.find('Rules', row, 'Fixed and Barred', `Row ${against} bars ${name} from this duty; Barred is kept, Fixed is not.`);
+    return false;
   });
 }
 
@@ -145,6 +125,11 @@ function oneOrder(rules: readonly Extract<Rule, { word: 'Order' }>[], report: Re
     report.fault({ table: 'Rules', row: other.row, column: 'Value', found: quote(other.aims.join(', ')), expected });
   }
   return first?.aims ?? DEFAULT_ORDER;
+}
+
+/** The shortest of several times. */
+function secondsOf(rules: readonly Extract<Rule, { word: 'Seconds' }>[]): number {
+  return rules.length === 0 ? DEFAULT_SECONDS : Math.min(...rules.map(({ seconds }) => seconds));
 }
 
 /** The highest of several prices; a blank one forbids the change. */

@@ -13,11 +13,12 @@ export function cleanName(text: string): string {
 
 /**
  * The key a name is compared by: cleaned, without characters that cannot be seen, and case folded.
- * Folding goes through upper case, so that ß meets SS, and knows no locale.
+ * Folding goes through lower and upper case, so that ß and ẞ meet SS, and knows no locale.
  */
 export function nameKey(text: string): string {
   if (PLAIN.test(text)) return text.toLowerCase();
-  return cleanName(text.replace(INVISIBLE, '').toUpperCase().toLowerCase());
+  const visible = text.replace(INVISIBLE, '').normalize('NFC');
+  return cleanName(visible.toLowerCase().toUpperCase().toLowerCase());
 }
 
 /** Sorts keys by their letters first, marks ignored, then by code units: the same on every machine. */
@@ -30,7 +31,7 @@ export function compareKeys(one: string, other: string): number {
 }
 
 /** A key without accents and other marks. */
-export function withoutMarks(key: string): string {
+function withoutMarks(key: string): string {
   if (PLAIN.test(key)) return key;
   return key.normalize('NFD').replace(MARKS, '');
 }

@@ -1,7 +1,13 @@
-import { nameKey, withoutMarks } from './name';
+import { nameKey } from './name';
 
 /** Suggestions named at most. */
 const NAMED = 3;
+
+/** Questions answered at most: beyond, names are too many to be slips, and comparing them would take long. */
+const ASKED = 300;
+
+/** Marks of European letters; those of other scripts are letters of their own and stay. */
+const ACCENTS = /[\u0300-\u036F]/gu;
 
 /** A listed name prepared for comparison. */
 interface Candidate {
@@ -19,22 +25,31 @@ export class NearMisses {
   /** Names with other numbers in them are other duties, not misspelt ones: candidates by their digits. */
   readonly #byDigits = new Map<string, Candidate[]>();
   /** One name for every text that is left when the digits are taken out of the listed names. */
-  readonly #byWords = new Map<string, string>();
+  readonly #byWords = new Map<string, { readonly name: string; readonly letters: number }>();
+  readonly #listed: () => readonly string[];
+  #asked = 0;
 
-  constructor(listed: readonly string[]) {
-    for (const name of listed) {
+  /** @param listed gives the listed names; they are prepared when the first question is asked */
+  constructor(listed: () => readonly string[]) {
+    this.#listed = listed;
+  }
+
+  #prepare(): void {
+    for (const name of this.#listed()) {
       const candidate = prepare(name);
       const digits = digitsOf(candidate.key);
       const list = this.#byDigits.get(digits) ?? [];
       this.#byDigits.set(digits, list);
       list.push(candidate);
       const words = withoutDigits(candidate.key);
-      if (digits !== '' && !this.#byWords.has(words)) this.#byWords.set(words, name);
+      if (digits === '' || words === '' || this.#byWords.has(words)) continue;
+      this.#byWords.set(words, { name, letters: lettersOf(words) });
     }
   }
 
   /** The nearest listed names, best first; empty where none is near. */
   nearest(text: string): readonly string[] {
+    if (this.#byDigits.size === 0) this.#prepare();
     const wanted = prepare(text);
     let best = farthest(wanted.key.length) + 1;
     let found: string[] = [];
@@ -50,16 +65,23 @@ export class NearMisses {
 
   /** A listed name that differs by its numbers and by slips of the pen elsewhere; null where there is none. */
   relative(text: string): string | null {
-    const wanted = withoutDigits(nameKey(text));
+    if (this.#byDigits.size === 0) this.#prepare();
     if (digitsOf(nameKey(text)) === '') return null;
-    for (const [words, name] of this.#byWords) {
-      if (Math.abs(words.length - wanted.length) <= 2 && slips(words, wanted) <= farthest(wanted.length)) return name;
+    const wanted = withoutDigits(nameKey(text));
+    const exact = this.#byWords.get(wanted);
+    if (exact !== undefined) return exact.name;
+    const most = farthest(wanted.length);
+    const letters = lettersOf(wanted);
+    for (const [words, other] of this.#byWords) {
+      if (Math.abs(words.length - wanted.length) > most || bits(other.letters ^ letters) > 2 * most) continue;
+      if (slips(words, wanted, most) <= most) return other.name;
     }
     return null;
   }
 
   /** The question to put to whoever typed it: ` Did you mean "A" or "B"?`, or '' where nothing is near. */
   question(text: string): string {
+    if (this.#asked++ >= ASKED) return '';
     const names = this.nearest(text).map((name) => `"${name}"`);
     if (names.length === 0) {
       const relative = this.relative(text);
@@ -75,7 +97,7 @@ export class NearMisses {
  * essence ("Mon 9:00", "mon 09:00") are almost the same.
  */
 export function essence(key: string): string {
-  const tokens = withoutMarks(key).match(/\p{L}+|\p{N}+/gu) ?? [];
+  const tokens = key.normalize('NFD').replace(ACCENTS, '').match(/[\p{L}\p{M}]+|\p{N}+/gu) ?? [];
   let text = '';
   let afterNumber = false;
   for (const token of tokens) {
@@ -89,9 +111,14 @@ export function essence(key: string): string {
 
 function prepare(name: string): Candidate {
   const key = nameKey(name);
+  return { name, key, essence: essence(key), words: key.split(' ').sort().join(' '), letters: lettersOf(key) };
+}
+
+/** A slip of the pen changes two of these bits at most. */
+function lettersOf(key: string): number {
   let letters = 0;
-  for (const character of key) letters |= 1 << (character.codePointAt(0)! & 31);
-  return { name, key, essence: essence(key), words: key.split(' ').sort().join(' '), letters };
+  for (let i = 0; i < key.length; i++) letters |= 1 << (key.charCodeAt(i) & 31);
+  return letters;
 }
 
 function digitsOf(key: string): string {
@@ -109,11 +136,11 @@ function farthest(length: number): number {
 }
 
 function distanceBetween(one: Candidate, other: Candidate, most: number): number {
-  if (one.essence === other.essence || one.words === other.words) return 0;
+  if ((one.essence !== '' && one.essence === other.essence) || one.words === other.words) return 0;
   if (Math.abs(one.key.length - other.key.length) > most) return Infinity;
   // Of three letters, one too many is another name: only the same letters count.
   if (bits(one.letters ^ other.letters) > (one.key.length > 3 ? 2 * most : 0)) return Infinity;
-  return slips(one.key, other.key);
+  return slips(one.key, other.key, most);
 }
 
 function bits(mask: number): number {
@@ -125,8 +152,10 @@ function bits(mask: number): number {
 /**
  * How many letters were left out, put in, mistaken or swapped with their neighbour: the optimal
  * string alignment distance (Damerau, Communications of the ACM 7, 1964).
+ *
+ * @param most the search ends, with Infinity, where there must be more
  */
-export function slips(one: string, other: string): number {
+export function slips(one: string, other: string, most = Infinity): number {
   let before: number[] = [];
   let previous = Array.from({ length: other.length + 1 }, (_, j) => j);
   for (let i = 1; i <= one.length; i++) {
@@ -138,6 +167,8 @@ export function slips(one: string, other: string): number {
       if (swapped) least = Math.min(least, before[j - 2] + 1);
       current.push(least);
     }
+    // A swap reaches back over one row, so two rows beyond `most` are needed to be sure.
+    if (Math.min(...current) > most && Math.min(...previous) > most) return Infinity;
     before = previous;
     previous = current;
   }

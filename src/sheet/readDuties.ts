@@ -51,11 +51,12 @@ export function readDuties(range: Range | null, duties: Names, labels: Map<strin
   if (table === null) return { kind: 'every', need: 1 };
   for (const row of rowsOf(table, report)) {
     const name = row.text('Duty');
+    // What cannot be read is reported in a row without a name too, but its labels name nothing.
+    const entry = readEntry(row, name === '' ? new Map<string, string>() : labels);
     if (name === '') {
       if (!row.isBroken) row.find('Incomplete row', 'The row names no duty and is left out.');
       continue;
     }
-    const entry = readEntry(row, labels);
     const number = duties.number(name);
     if (number === entries.length) entries.push(entry);
     else combine(entries[number], entry, duties.names[number], row);

@@ -1,54 +1,60 @@
-import { cellText, errorCode, isBlank, isBlankName, quoteCell } from './cell';
+import { cellText, errorCode, isBlank, isBlankName, plainCell, quoteCell } from './cell';
+import { InputFault } from './fault';
 import { cleanName, nameKey } from './name';
 import { readWhole } from './number';
-import { InputFault } from './fault';
 import type { Range } from './range';
+import { endOfRows, isBlankRow } from './table';
 
-/** A pair read from a cross table; rank null where the mark is no number. */
-export interface GridPair {
+/** A row of a pairs table, read from a cross table; rank null where the mark is no number. */
+export interface PairRow {
   readonly duty: string;
   readonly person: string;
   readonly rank: number | null;
 }
 
-/** The word on the edges of a table that DUTY.GRID spilled: its totals are no pairs. */
+/** The word on the last row and column of a table that DUTY.GRID spilled: its totals are no pairs. */
 const TOTAL = nameKey('Total');
 
 /**
- * Reads a cross table: duties down the first column, people across the first row. A number is a
- * rank, any other mark a pair; blank, `no` and 0 are none.
+ * Reads a cross table: duties down the first column, people across the first row that is not blank.
+ * A number is a rank, any other mark a pair; blank, `no` and 0 are none. A last row or column of
+ * totals is left out.
  *
  * @throws InputFault at the first error cell, at a number that is no rank, or where there is no second column
  */
-export function readGrid(range: Range): GridPair[] {
-  const [people = [], ...rows] = range;
-  if (people.length < 2) {
-    throw new InputFault({
-      table: 'Grid',
-      row: null,
-      column: null,
-      found: `${people.length} ${people.length === 1 ? 'column' : 'columns'}`,
-      expected: 'duties in the first column and at least one person beside it',
-    });
-  }
-  const names = people.map((cell, c) => (c === 0 ? '' : edgeName(cell, 1, c)));
-  const pairs: GridPair[] = [];
-  rows.forEach((row, r) => {
-    const duty = edgeName(row[0], r + 2, 0);
+export function readGrid(range: Range): PairRow[] {
+  const end = endOfRows(range);
+  let first = 0;
+  while (first < end && isBlankRow(range[first])) first++;
+  const width = range.length === 0 ? 0 : range[Math.min(first, range.length - 1)].length;
+  if (width < 2) throw tooNarrow(width);
+  if (first === end) return [];
+  const people = withoutTotal(range[first].map((cell, c) => (c === 0 ? '' : edgeName(cell, first + 1, c))));
+  const duties = withoutTotal(range.slice(first, end).map((row, r) => (r === 0 ? '' : edgeName(row[0], first + r + 1, 0))));
+  const pairs: PairRow[] = [];
+  duties.forEach((duty, r) => {
     if (duty === '') return;
-    names.forEach((person, c) => {
-      if (person !== '' && isMark(row[c], r + 2, person)) pairs.push({ duty, person, rank: rankOf(row[c], r + 2, person) });
+    people.forEach((person, c) => {
+      if (person === '') return;
+      const cell = plainCell(range[first + r][c]);
+      if (isMark(cell, first + r + 1, person)) pairs.push({ duty, person, rank: rankOf(cell, first + r + 1, person) });
     });
   });
   return pairs;
 }
 
-/** A name on an edge; '' for a blank one and for totals. */
+/** The names on an edge without a last one that heads totals. */
+function withoutTotal(names: readonly string[]): readonly string[] {
+  let last = names.length - 1;
+  while (last > 0 && names[last] === '') last--;
+  return last > 0 && nameKey(names[last]) === TOTAL ? names.slice(0, last) : names;
+}
+
+/** A name on an edge; '' for a blank one. */
 function edgeName(cell: unknown, row: number, column: number): string {
-  if (errorCode(cell) !== null) throw fault(row, column === 0 ? 'Duty' : `number ${column + 1}`, cell, 'a name');
-  if (isBlankName(cell)) return '';
-  const name = cleanName(cellText(cell));
-  return nameKey(name) === TOTAL ? '' : name;
+  const plain = plainCell(cell);
+  if (errorCode(plain) !== null) throw fault(row, column === 0 ? 'Duty' : `number ${column + 1}`, plain, 'a name');
+  return isBlankName(plain) ? '' : cleanName(cellText(plain));
 }
 
 function isMark(cell: unknown, row: number, person: string): boolean {
@@ -67,4 +73,14 @@ function rankOf(cell: unknown, row: number, person: string): number | null {
 
 function fault(row: number, column: string, cell: unknown, expected: string): InputFault {
   return new InputFault({ table: 'Grid', row, column, found: quoteCell(cell), expected });
+}
+
+function tooNarrow(width: number): InputFault {
+  return new InputFault({
+    table: 'Grid',
+    row: null,
+    column: null,
+    found: `${width} ${width === 1 ? 'column' : 'columns'}`,
+    expected: 'duties in the first column and at least one person beside it',
+  });
 }

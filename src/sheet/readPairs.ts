@@ -1,4 +1,4 @@
-import { isBlank } from './cell';
+import { cellText, isBlank, isBlankName, plainCell } from './cell';
 import type { Names } from './name';
 import type { Range } from './range';
 import type { Report } from './report';
@@ -61,21 +61,23 @@ function readRows(range: Range, layout: Layout, duties: Names, people: Names, re
   const rankPlace = table.places.get('Rank') ?? -1;
   for (let index = table.first; index < table.end; index++) {
     const cells = table.range[index];
-    const duty = cells[dutyPlace];
-    const person = cells[personPlace];
+    const duty = plainName(cells[dutyPlace]);
+    const person = plainName(cells[personPlace]);
     const rank = rankPlace === -1 ? undefined : cells[rankPlace];
     // The common row is read without an object of its own; anything else takes the careful way.
-    if (isPlainName(duty) && isPlainName(person) && isPlainRank(rank)) {
+    if (duty !== '' && person !== '' && isPlainRank(rank)) {
       addRow(rows, duties.number(duty), people.number(person), rank ?? NO_RANK, index + 1);
-    } else {
+    } else if (![cells[dutyPlace], cells[personPlace], rank].every((cell) => isBlankName(plainCell(cell)))) {
       readCarefully(table, index, rows, duties, people, report);
     }
   }
   return rows;
 }
 
-function isPlainName(cell: unknown): cell is string {
-  return typeof cell === 'string' && !isBlank(cell);
+/** The text of a name that needs no care: visible text, or a number other than 0; otherwise ''. */
+function plainName(cell: unknown): string {
+  if (typeof cell === 'string') return isBlank(cell) ? '' : cell;
+  return typeof cell === 'number' && cell !== 0 ? cellText(cell) : '';
 }
 
 function isPlainRank(cell: unknown): cell is number | null | undefined {

@@ -35,11 +35,14 @@ export function readPeople(range: Range, people: Names, report: Report): PeopleT
   if (table === null) return { kind: 'everyone', maximum: 0 };
   for (const row of rowsOf(table, report)) {
     const name = row.text('Person');
+    const entry = readEntry(row);
     if (name === '') {
       if (!row.isBroken) row.find('Incomplete row', 'The row names no person and is left out.');
       continue;
     }
-    const entry = readEntry(row);
+    if (isBlank(row.cell('Maximum'))) {
+      row.find('Blank maximum', `The maximum of ${cleanName(name)} is blank and is read as 0.`);
+    }
     const number = people.number(name);
     if (number === entries.length) entries.push(entry);
     else combine(entries[number], entry, people.names[number], row);
@@ -54,9 +57,6 @@ export function readPeople(range: Range, people: Names, report: Report): PeopleT
 }
 
 function readEntry(row: Row): PersonEntry {
-  if (isBlank(row.cell('Maximum'))) {
-    row.find('Blank maximum', `The maximum of ${cleanName(row.text('Person'))} is blank and is read as 0.`);
-  }
   return {
     maximum: row.whole('Maximum', 0, 0),
     minimum: row.whole('Minimum', 0, 0),

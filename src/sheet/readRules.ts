@@ -1,7 +1,7 @@
 import { DEFAULT_ORDER as AIMS, type Aim } from '../cover/case';
 import { isBlank } from './cell';
 import { cleanName, nameKey } from './name';
-import { readWhole, wholeExpected } from './number';
+import { wholeExpected } from './number';
 import type { Range } from './range';
 import type { Report } from './report';
 import { openTable, rowsOf, type Layout, type Row } from './table';
@@ -13,6 +13,9 @@ const LAYOUT: Layout = {
   byHeading: [],
   required: ['Rule', 'Duty', 'Person'],
 };
+
+/** The longest time an exact search may be given: one hour. */
+const MOST_SECONDS = 3600;
 
 /** A rule as written; names are cleaned texts, looked up later. */
 export type Rule = { readonly row: number } & (
@@ -40,7 +43,7 @@ const READERS: Record<Rule['word'], (row: Row) => Rule | null> = {
     return minutes === null ? null : { word: 'Rest', minutes, row: row.number };
   },
   Seconds: (row) => {
-    const seconds = readValue(row, 1, 'Seconds needs the time an exact search may take');
+    const seconds = readValue(row, 1, 'Seconds needs the time an exact search may take', MOST_SECONDS);
     return seconds === null ? null : { word: 'Seconds', seconds, row: row.number };
   },
 };
@@ -122,8 +125,8 @@ function readPrice(row: Row): Rule | null {
 }
 
 /** The number in Value, which the rule cannot do without. */
-function readValue(row: Row, least: number, why: string): number | null {
-  if (readWhole(row.cell('Value'), least).kind !== 'blank') return row.whole('Value', least, 0);
-  row.fault('Value', row.cell('Value'), `${wholeExpected(least)}: ${why}`);
+function readValue(row: Row, least: number, why: string, most?: number): number | null {
+  if (!isBlank(row.cell('Value'))) return row.whole('Value', least, 0, most);
+  row.fault('Value', row.cell('Value'), `${wholeExpected(least, most)}: ${why}`);
   return null;
 }

@@ -3,6 +3,9 @@ import { InputFault, type FaultPlace, type Finding, type TableName } from './fau
 /** Findings of one kind in one table that are listed before the rest is only counted. */
 const LISTED = 1000;
 
+/** Cells of one column that cannot be read and are listed one by one before the rest is only counted. */
+const FAULTS_LISTED = 10_000;
+
 /** More rows than a sheet has. */
 const LAST_ROW = 2_000_000;
 
@@ -13,9 +16,13 @@ export class Report {
   readonly #faults: InputFault[] = [];
   readonly #findings: Finding[] = [];
   readonly #counts = new Map<string, number>();
+  readonly #faultCounts = new Map<string, { place: FaultPlace; count: number }>();
 
   fault(place: FaultPlace): void {
-    this.#faults.push(new InputFault(place));
+    const kind = `${place.table} ${place.column}`;
+    const entry = this.#faultCounts.get(kind) ?? { place, count: 0 };
+    this.#faultCounts.set(kind, entry);
+    if (++entry.count <= FAULTS_LISTED) this.#faults.push(new InputFault(place));
   }
 
   find(table: TableName, row: number | null, finding: string, detail: string): void {
@@ -25,9 +32,12 @@ export class Report {
     if (count <= LISTED) this.#findings.push({ table, row, finding, detail });
   }
 
-  /** The faults in the order of the tables, then of the rows. */
+  /** The faults in the order of the tables, then of the rows; what was too much to list is counted. */
   faults(): InputFault[] {
-    return this.#faults
+    const rest = [...this.#faultCounts.values()]
+      .filter(({ count }) => count > FAULTS_LISTED)
+      .map(({ place, count }) => new InputFault({ ...place, row: null, found: `${count - FAULTS_LISTED} more cells like these` }));
+    return [...this.#faults, ...rest]
       .map((fault) => ({ fault, table: fault.place.table, row: fault.place.row }))
       .sort(byPlace)
       .map(({ fault }) => fault);

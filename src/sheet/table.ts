@@ -1,4 +1,4 @@
-import { cellText, errorCode, isBlank, isBlankName, quoteCell } from './cell';
+import { cellText, errorCode, isBlank, isBlankName, plainCell, quoteCell } from './cell';
 import type { TableName } from './fault';
 import { nameKey } from './name';
 import { readWhole, wholeExpected } from './number';
@@ -37,7 +37,7 @@ export interface Table {
 export function openTable(range: Range, layout: Layout, report: Report): Table | null {
   const end = endOfRows(range);
   let first = 0;
-  while (first < end && range[first].every(isBlankName)) first++;
+  while (first < end && isBlankRow(range[first])) first++;
   if (first === end) return { table: layout.table, range, first, end, places: new Map() };
   const headed = holdsHeadings(range[first], layout.keys);
   const places = headed
@@ -61,15 +61,30 @@ export function openTable(range: Range, layout: Layout, report: Report): Table |
 }
 
 /** Whole columns end in hundreds of thousands of blank rows: they are skipped from below. */
-function endOfRows(range: Range): number {
+export function endOfRows(range: Range): number {
   let end = range.length;
-  while (end > 0 && range[end - 1].every(isBlankName)) end--;
+  while (end > 0 && isBlankRow(range[end - 1])) end--;
   return end;
 }
 
+/** True where no cell says anything; a plain loop, as a million of them may have to be skipped. */
+export function isBlankRow(row: readonly unknown[]): boolean {
+  for (let c = 0; c < row.length; c++) {
+    const cell = row[c];
+    if (cell === null || cell === '' || cell === undefined) continue;
+    if (!isBlankName(plainCell(cell))) return false;
+  }
+  return true;
+}
+
 function holdsHeadings(row: readonly unknown[], keys: readonly string[]): boolean {
-  const texts = new Set(row.map((cell) => (typeof cell === 'string' ? nameKey(cell) : '')));
+  const texts = new Set(row.map(headingKey));
   return keys.every((key) => texts.has(nameKey(key)));
+}
+
+function headingKey(cell: unknown): string {
+  const plain = plainCell(cell);
+  return typeof plain === 'string' ? nameKey(plain) : '';
 }
 
 function placesByHeading(
@@ -81,7 +96,7 @@ function placesByHeading(
   const known = new Map([...columns, ...byHeading].map((column) => [nameKey(column), column]));
   const places = new Map<string, number>();
   row.forEach((cell, place) => {
-    const column = typeof cell === 'string' ? known.get(nameKey(cell)) : undefined;
+    const column = known.get(headingKey(cell));
     if (column === undefined) return;
     if (places.has(column)) {
       report.find(table, index + 1, 'Heading given twice', `The first column headed ${column} is read, the other is not.`);
@@ -107,10 +122,10 @@ export class Row {
     this.number = index + 1;
   }
 
-  /** The cell as it came; undefined where the column is not there. */
+  /** The value in the cell; undefined where the column is not there. */
   cell(column: string): unknown {
     const place = this.#table.places.get(column);
-    return place === undefined ? undefined : this.#table.range[this.number - 1][place];
+    return place === undefined ? undefined : plainCell(this.#table.range[this.number - 1][place]);
   }
 
   /** A name or label; '' where blank. */
@@ -120,16 +135,16 @@ export class Row {
   }
 
   /**
-   * A whole number from `least`; `blank` where the cell is blank, and also, with a fault reported,
+   * A whole number from `least` to `most`; `blank` where the cell is blank, and also, with a fault reported,
    * where it is no such number: the rest of the row can then still be read.
    */
-  whole(column: string, least: number, blank: number): number {
+  whole(column: string, least: number, blank: number, most?: number): number {
     const cell = this.cell(column);
     if (errorCode(cell) !== null) return blank;
-    const read = readWhole(cell, least);
+    const read = readWhole(cell, least, most);
     if (read.kind === 'blank') return blank;
     if (read.kind === 'other') {
-      this.fault(column, cell, wholeExpected(least));
+      this.fault(column, cell, wholeExpected(least, most));
       return blank;
     }
     if (read.asText) {
@@ -152,11 +167,12 @@ export function* rowsOf(table: Table, report: Report): Generator<Row> {
   const places = [...table.places.entries()];
   for (let index = table.first; index < table.end; index++) {
     const cells = table.range[index];
-    if (places.every(([, place]) => isBlankName(cells[place]))) continue;
+    if (places.every(([, place]) => isBlankName(plainCell(cells[place])))) continue;
     const row = new Row(table, index, report);
-    for (const [column, place] of places) {
-      if (typeof cells[place] !== 'object' || errorCode(cells[place]) === null) continue;
-      row.fault(column, cells[place], expectedIn(column));
+    for (const [column] of places) {
+      const cell = row.cell(column);
+      if (errorCode(cell) === null) continue;
+      row.fault(column, cell, expectedIn(column));
       row.isBroken = true;
     }
     yield row;
@@ -173,7 +189,8 @@ function expectedIn(column: string): string {
 
 /** True for a range that is one number, or text that reads as one: "the same for everyone". */
 export function isOneNumber(range: Range): boolean {
-  if (range.length !== 1 || range[0].length !== 1 || isBlank(range[0][0])) return false;
-  const cell = range[0][0];
+  if (range.length !== 1 || range[0].length !== 1) return false;
+  const cell = plainCell(range[0][0]);
+  if (isBlank(cell)) return false;
   return typeof cell === 'number' || typeof cell === 'boolean' || errorCode(cell) !== null || readWhole(cell, 0).kind === 'number';
 }

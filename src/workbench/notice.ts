@@ -12,10 +12,10 @@ export class Notice {
     this.#element = element;
   }
 
-  /** Shows a text, which may come from a file: never as markup. */
-  show(text: string, actions: readonly NoticeAction[] = []): void {
+  /** Shows sentences, which may hold what a file says: never as markup. */
+  show(sentences: string | readonly string[], actions: readonly NoticeAction[] = []): void {
     const paragraph = document.createElement('p');
-    paragraph.textContent = text;
+    paragraph.textContent = typeof sentences === 'string' ? sentences : sentences.join(' ');
     const buttons = [...actions, { label: 'Close', run: () => undefined }].map(({ label, run }) => {
       const button = document.createElement('button');
       button.type = 'button';

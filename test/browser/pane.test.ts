@@ -46,7 +46,7 @@ describe('the pane', () => {
     await page.locator('#pane').getByRole('button', { name: 'ASSIGN' }).focus();
     await page.evaluate(() => {
       const { model } = window.dutyproof!.workbook;
-      model.dispatch('UPDATE_CELL', { sheetId: model.getters.getSheetIdByName('People')!, col: 1, row: 17, content: '3' });
+      model.dispatch('UPDATE_CELL', { sheetId: model.getters.getSheetIdByName('Inputs')!, col: 7, row: 18, content: '3' });
     });
     await page.locator('#pane main').getByText('1 uncovered').waitFor();
     const focused = await page.evaluate(() => document.querySelector('#pane')!.shadowRoot!.activeElement?.textContent);
@@ -61,8 +61,8 @@ describe('the pane', () => {
     await page.addStyleTag({ content: '.wb-pane { width: 300px !important; }' });
     await page.evaluate(() => {
       const { model } = window.dutyproof!.workbook;
-      const sheetId = model.getters.getSheetIdByName('Duties')!;
-      model.dispatch('ADD_COLUMNS_ROWS', { sheetId, sheetName: 'Duties', dimension: 'ROW', base: 43, quantity: 1200, position: 'before' });
+      const sheetId = model.getters.getSheetIdByName('Inputs')!;
+      model.dispatch('ADD_COLUMNS_ROWS', { sheetId, sheetName: 'Inputs', dimension: 'ROW', base: 43, quantity: 1200, position: 'before' });
       for (let row = 43; row < 1243; row++) model.dispatch('UPDATE_CELL', { sheetId, col: 0, row, content: `Extra duty number ${row}` });
     });
     await page.locator('#pane main').getByText('1,203 uncovered').waitFor();

@@ -1,15 +1,13 @@
-import { mkdtempSync, readFileSync, writeFileSync } from 'node:fs';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
-import type { Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
-import { openXlsx } from '../../src/workbench/files/openXlsx';
+import { DeskPage } from './desk';
 import { openSite, watch, type Site, type Watch } from './harness';
 
+/** The maximum of Quentin Rook, who may take the labs that are short. */
+const SCARCE = 'Inputs!H19';
+
 let site: Site;
-let page: Page;
+let desk: DeskPage;
 let seen: Watch;
-const folder = mkdtempSync(join(tmpdir(), 'dutyproof-'));
 
 beforeAll(async () => {
   site = await openSite();
@@ -17,156 +15,164 @@ beforeAll(async () => {
 afterAll(() => site.close());
 
 beforeEach(async () => {
-  page = await site.browser.newPage({ viewport: { width: 1400, height: 900 } });
-  seen = watch(page, site.origin);
-  await page.goto(`${site.origin}/workbench.html`);
-  await page.waitForFunction(() => document.querySelector('.o-spreadsheet canvas') !== null);
+  desk = await DeskPage.open(site);
+  seen = watch(desk.page, site.origin);
 });
 
 afterEach(async () => {
   expect(seen.foreign).toEqual([]);
   expect(seen.errors).toEqual([]);
-  await page.close();
+  await desk.page.close();
 });
-
-/** The value shown in a cell. */
-async function valueAt(sheet: string, column: number, row: number): Promise<unknown> {
-  return page.evaluate(
-    ({ sheet: name, column: col, row: line }) => {
-      const { getters } = window.dutyproof!.workbook.model;
-      return getters.getEvaluatedCell({ sheetId: getters.getSheetIdByName(name)!, col, row: line }).value;
-    },
-    { sheet, column, row },
-  );
-}
-
-/** Selects a cell as a click does, and types into it. */
-async function type(sheet: string, column: number, row: number, text: string): Promise<void> {
-  await page.evaluate(
-    ({ sheet: name, column: col, row: line }) => {
-      const { model } = window.dutyproof!.workbook;
-      const sheetIdTo = model.getters.getSheetIdByName(name)!;
-      const sheetIdFrom = model.getters.getActiveSheetId();
-      if (sheetIdFrom !== sheetIdTo) model.dispatch('ACTIVATE_SHEET', { sheetIdFrom, sheetIdTo });
-      model.selection.selectCell(col, line);
-    },
-    { sheet, column, row },
-  );
-  await page.keyboard.type(text, { delay: 15 });
-  await page.keyboard.press('Enter');
-}
-
-function pane(): ReturnType<Page['locator']> {
-  return page.locator('#pane main');
-}
 
 describe('the workbench with the demo', () => {
   it('opens with the demo answered, in the sheet and in the pane', async () => {
-    expect(await valueAt('Results', 0, 2)).toBe('Seats needed');
-    expect(await valueAt('Results', 1, 2)).toBe(52);
-    expect(await valueAt('Results', 1, 4)).toBe(3);
-    await pane().getByText('of 52 seats covered').waitFor();
-    await pane().getByText('3 uncovered').waitFor();
+    expect(await desk.sheets()).toEqual(['Inputs', 'Results', 'Grid']);
+    expect(await desk.valueAt('Results!A3')).toBe('Seats needed');
+    expect(await desk.valueAt('Results!B3')).toBe(52);
+    expect(await desk.valueAt('Results!B5')).toBe(3);
+    await desk.pane.getByText('of 52 seats covered').waitFor();
+    expect(await desk.page.title()).toBe('demo.xlsx · Dutyproof workbench');
+  });
+
+  it('asks nothing of any other origin while it opens', async () => {
+    const page = await site.browser.newPage();
+    const { foreign, errors } = watch(page, site.origin);
+    await page.goto(`${site.origin}/workbench.html`);
+    await page.locator('#pane main').getByText('3 uncovered').waitFor();
+    await page.getByRole('button', { name: 'Licences' }).click();
+    expect(foreign).toEqual([]);
+    expect(errors).toEqual([]);
+    await page.close();
   });
 
   it('recomputes every result and the pane when a cell is typed in', async () => {
-    await type('People', 1, 17, '3');
-    await pane().getByText('1 uncovered').waitFor();
-    expect(await valueAt('Results', 1, 4)).toBe(1);
+    await desk.type(SCARCE, '3');
+    await desk.pane.getByText('1 uncovered').waitFor();
+    expect(await desk.valueAt('Results!B5')).toBe(1);
+  });
+
+  it('takes in a row that is added below a table', async () => {
+    await desk.type('Inputs!G25', 'Wilma Tarn');
+    await desk.pane.getByText('Findings (1)').waitFor();
   });
 
   it('shows what cannot be read in words, and answers again when it is mended', async () => {
-    await type('People', 1, 17, 'two');
-    await pane().getByText('People table, row 18 of the range, column Maximum: found "two"').waitFor();
-    expect(await valueAt('Results', 0, 1)).toBe('#VALUE!');
-    await type('People', 1, 17, '1');
-    await pane().getByText('3 uncovered').waitFor();
+    await desk.type(SCARCE, 'two');
+    await desk.pane.getByText('People table, row 18 of the range, column Maximum: found "two"').waitFor();
+    expect(await desk.valueAt('Results!A2')).toBe('#VALUE!');
+    await desk.type(SCARCE, '1');
+    await desk.pane.getByText('3 uncovered').waitFor();
   });
 
   it('forgets a case whose formulas are gone', async () => {
-    await page.evaluate(() => {
+    await desk.page.evaluate(() => {
       const { model } = window.dutyproof!.workbook;
-      for (const name of ['Results', 'Grid']) model.dispatch('DELETE_SHEET', { sheetId: model.getters.getSheetIdByName(name)! });
+      for (const name of ['Results', 'Grid']) model.dispatch('DELETE_SHEET', { sheetId: model.getters.getSheetIdByName(name)!, sheetName: name });
     });
-    await pane().getByText('Nothing has been calculated yet').waitFor();
+    await desk.pane.getByText('Nothing has been calculated yet').waitFor();
   });
 
   it('jumps to the cell that a button of the pane names', async () => {
-    await pane().getByText('Where it answers').click();
-    await pane().getByRole('button', { name: 'GRID Grid!A1' }).click();
-    expect(await page.evaluate(() => window.dutyproof!.workbook.model.getters.getActiveSheetId())).toBe(
-      await page.evaluate(() => window.dutyproof!.workbook.model.getters.getSheetIdByName('Grid')),
-    );
+    await desk.pane.getByText('Where it answers').click();
+    await desk.pane.getByRole('button', { name: 'GRID Grid!A2' }).click();
+    await desk.page.locator('.o-sheet.active', { hasText: 'Grid' }).waitFor();
   });
 
   it('nests our functions in native ones and follows A1# across sheets', async () => {
-    await type('Rules', 6, 0, '=ROWS(DUTY.UNCOVERED(Pairs, People, Duties, Rules))');
-    expect(await valueAt('Rules', 6, 0)).toBe(4);
-    await type('Rules', 6, 1, '=ROWS(Results!A2#)');
-    expect(await valueAt('Rules', 6, 1)).toBe(12);
-    await type('Rules', 6, 2, '=DUTY.ASSIGN(Pairs, Peple)');
-    expect(String(await valueAt('Rules', 6, 2))).toMatch(/^#/u);
+    await desk.type('Inputs!R1', '=ROWS(DUTY.UNCOVERED(Pairs, People, Duties, Rules))');
+    expect(await desk.valueAt('Inputs!R1')).toBe(4);
+    await desk.type('Inputs!R2', '=ROWS(Results!A2#)');
+    expect(await desk.valueAt('Inputs!R2')).toBe(12);
+    await desk.type('Inputs!R3', '=DUTY.ASSIGN(Pairs, Peple)');
+    expect(String(await desk.valueAt('Inputs!R3'))).toMatch(/^#/u);
   });
 });
 
-describe('files', () => {
-  async function save(): Promise<string> {
-    const [download] = await Promise.all([page.waitForEvent('download'), page.click('#save')]);
-    const file = join(folder, `saved-${Date.now()}.xlsx`);
-    await download.saveAs(file);
-    return file;
-  }
-
-  it('saves formulas and values that come back when the file is opened again', async () => {
-    await type('People', 1, 17, '2');
-    await pane().getByText('2 uncovered').waitFor();
-    const file = await save();
-    await page.click('#demo');
-    await pane().getByText('3 uncovered').waitFor();
-    await page.setInputFiles('#files', file);
-    await pane().getByText('2 uncovered').waitFor();
-    expect(await valueAt('Results', 1, 4)).toBe(2);
-    const book = await openXlsx(new Uint8Array(readFileSync(file)));
-    const formulas = book.sheets.flatMap(({ cells }) => cells.flatMap(({ formula }) => (formula === null ? [] : [formula])));
-    expect(formulas).toContain('=DUTY.ASSIGN(Pairs,People,Duties,Rules)');
-    expect(formulas).toHaveLength(6);
-    expect(book.names.map(({ name }) => name).sort()).toEqual(['Duties', 'Pairs', 'People', 'Rules']);
+describe('the page', () => {
+  it('shows the formula line, the grid and the tabs of the engine, and none of its menus', async () => {
+    const { page } = desk;
+    for (const part of ['.o-topbar-composer', '.o-grid canvas', '.o-sheet-list']) expect(await page.locator(part).first().isVisible()).toBe(true);
+    for (const part of ['.o-topbar-top', '.tool-container', '.o-list-sheets', '.o-sheet-icon', '.o-menu-wrapper']) {
+      expect(await page.locator(`${part} >> visible=true`).count(), part).toBe(0);
+    }
+    await page.keyboard.press('Control+f');
+    await page.keyboard.press('Control+h');
+    expect(await page.locator('.o-sidePanel').count()).toBe(0);
   });
 
-  it('opens tables as text files and answers them on new sheets when asked', async () => {
-    const files = {
-      'pairs.csv': '\uFEFFDuty;Person\r\nChoir;Ann\r\n"Organ; large";Bob\r\nOrgan, small;Ann\r\n',
-      'people.csv': 'Person,Maximum\nAnn,1\nBob,1\n',
-    };
-    for (const [name, text] of Object.entries(files)) writeFileSync(join(folder, name), text);
-    await page.setInputFiles('#files', Object.keys(files).map((name) => join(folder, name)));
-    await page.getByText('Answer them on new sheets').click();
-    await pane().getByText('of 3 seats covered').waitFor();
-    expect(await valueAt('pairs', 0, 2)).toBe('Organ; large');
-    expect(await valueAt('Results', 1, 4)).toBe(1);
+  it('names the publisher of the engine among the licences and nowhere else', async () => {
+    const outside = await desk.page.evaluate(() => {
+      const copy = document.body.cloneNode(true) as HTMLElement;
+      copy.querySelector('#licence-dialog')!.remove();
+      return copy.innerText + document.title;
+    });
+    expect(outside).not.toMatch(/odoo/iu);
+    for (const link of await desk.page.locator('#licence-dialog a').all()) {
+      const target = (await link.getAttribute('href'))!;
+      expect((await desk.page.request.get(`${site.origin}/${target}`)).status(), target).toBe(200);
+    }
   });
 
-  it('says what is wrong with a file it cannot open', async () => {
-    const broken = join(folder, 'broken.xlsx');
-    writeFileSync(broken, 'no workbook');
-    await page.setInputFiles('#files', broken);
-    await page.getByText('This file cannot be read as an .xlsx workbook').waitFor();
+  it('never scrolls as a whole, whatever the engine brings into view', async () => {
+    await desk.select('Inputs!A1');
+    await desk.page.locator('.o-sheet', { hasText: 'Grid' }).click();
+    await desk.page.waitForTimeout(400);
+    expect((await desk.page.locator('.wb-bar').boundingBox())!.y).toBe(0);
   });
 
-  it('keeps names that look like markup, formulas or numbers as text', async () => {
-    const hostile = ['<img src=x onerror="window.hacked=1">', '=1+1', '001', '+44', '\u202Ename', '🙂'.repeat(200), 'x'.repeat(10_000)];
-    const cell = (text: string): string => `"${text.replaceAll('"', '""')}"`;
-    writeFileSync(join(folder, 'pairs.csv'), ['Duty,Person', ...hostile.map((name) => `${cell(name)},${cell(name)}`)].join('\n'));
-    writeFileSync(join(folder, 'people.csv'), 'Person,Maximum\nNobody,1\n');
-    await page.setInputFiles('#files', ['pairs.csv', 'people.csv'].map((name) => join(folder, name)));
-    await page.getByText('Answer them on new sheets').click();
-    await pane().getByText('of 7 seats covered').waitFor();
-    await pane().getByText('Findings (').click();
-    expect(await page.evaluate(() => 'hacked' in window)).toBe(false);
-    expect(await page.locator('img[src="x"]').count()).toBe(0);
-    expect(await valueAt('pairs', 0, 2)).toBe('=1+1');
-    expect(await valueAt('pairs', 0, 3)).toBe('001');
-    const width = await pane().evaluate((element) => element.scrollWidth - element.clientWidth);
-    expect(width).toBeLessThanOrEqual(0);
+  it('inserts and deletes rows from a menu of its own, and formulas follow', async () => {
+    const { page } = desk;
+    await desk.select('Inputs!A3');
+    const box = (await page.locator('.o-grid-overlay').boundingBox())!;
+    await page.mouse.click(box.x + 80, box.y + 85, { button: 'right' });
+    await page.getByRole('menuitem', { name: 'Insert row above' }).click();
+    expect(await desk.valueAt('Inputs!H20')).toBe(1);
+    await desk.type('Inputs!H20', '3');
+    await desk.pane.getByText('1 uncovered').waitFor();
+    await page.keyboard.press('Control+z');
+    await desk.pane.getByText('3 uncovered').waitFor();
+  });
+
+  it('has a menu on the tabs: hide a sheet and show it again', async () => {
+    const { page } = desk;
+    const tab = (name: string) => page.locator('.o-sheet', { hasText: name });
+    await tab('Grid').click({ button: 'right' });
+    await page.getByRole('menuitem', { name: 'Hide' }).click();
+    await tab('Grid').waitFor({ state: 'detached' });
+    await tab('Results').click({ button: 'right' });
+    await page.getByRole('menuitem', { name: 'Show "Grid"' }).click();
+    await tab('Grid').waitFor();
+  });
+
+  it('is reached by keys alone: F6 leads from the sheet to the pane, to the bar and back', async () => {
+    const { page } = desk;
+    const focused = () => page.evaluate(() => {
+      const { activeElement } = document;
+      return activeElement?.closest('#grid, #pane, .wb-bar')?.id ?? '';
+    });
+    await desk.select('Results!A1');
+    await page.locator('.o-grid-overlay').click({ position: { x: 60, y: 60 } });
+    expect(await focused()).toBe('grid');
+    await page.keyboard.press('F6');
+    expect(await focused()).toBe('pane');
+    await page.keyboard.press('F6');
+    expect(await page.evaluate(() => document.activeElement?.id)).toBe('open');
+    await page.keyboard.press('F6');
+    expect(await focused()).toBe('grid');
+  });
+
+  it('gives the pane more room when the divider is moved', async () => {
+    const width = async () => (await desk.page.locator('#pane').boundingBox())!.width;
+    const before = await width();
+    await desk.page.locator('#divider').focus();
+    await desk.page.keyboard.press('ArrowLeft');
+    expect(await width()).toBeGreaterThan(before);
+    const line = (await desk.page.locator('#divider').boundingBox())!;
+    await desk.page.mouse.move(line.x + 3, 400);
+    await desk.page.mouse.down();
+    await desk.page.mouse.move(line.x + 103, 400);
+    await desk.page.mouse.up();
+    expect(await width()).toBeLessThan(before);
   });
 });

@@ -59,7 +59,7 @@ function solve(nodeCount: number, list: ArcList, cost: Float64Array): NetworkSim
 
 describe('least cost on published examples', () => {
   it.each(leastCosts)('$id has the printed cost', ({ arcs, supply, cost }) => {
-    const answer = solveSupplies(arcs as unknown as BoundedArc[], supply as unknown as Record<string, number>);
+    const answer = solveSupplies(arcs as unknown as BoundedArc[], supply);
     expect(answer ?? 'infeasible').toBe(cost);
   });
 

@@ -6,13 +6,14 @@ import {
   mkdirSync,
   mkdtempSync,
   readFileSync,
+  rmSync,
   symlinkSync,
   utimesSync,
   writeFileSync,
 } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { beforeEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 
 const SCRIPTS = join(import.meta.dirname, '../../scripts');
 
@@ -32,6 +33,8 @@ beforeEach(() => {
   const installed = join(clone, 'node_modules');
   program('npm', `echo "npm $*" >> ${clone}/calls; mkdir -p ${installed}; : > ${installed}/.package-lock.json`);
 });
+
+afterEach(() => rmSync(clone, { recursive: true }));
 
 /** Puts a shell script on the path. */
 function program(name: string, script: string): void {

@@ -1,4 +1,4 @@
-import { mkdirSync, mkdtempSync, writeFileSync } from 'node:fs';
+import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { request, type IncomingMessage } from 'node:http';
 import { createServer, type AddressInfo } from 'node:net';
 import { tmpdir } from 'node:os';
@@ -20,7 +20,10 @@ beforeAll(async () => {
   server = await serve(folder, 0);
 });
 
-afterAll(() => server.close());
+afterAll(async () => {
+  await server.close();
+  rmSync(outside, { recursive: true });
+});
 
 interface Answer {
   readonly status: number | undefined;

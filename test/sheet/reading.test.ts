@@ -62,7 +62,7 @@ describe('names', () => {
 });
 
 describe('near misses', () => {
-  const near = new NearMisses(['Ann Lee', 'Race rules 108', 'Race rules 109', 'Mon 09:00', 'Bob']);
+  const near = new NearMisses(() => ['Ann Lee', 'Race rules 108', 'Race rules 109', 'Mon 09:00', 'Bob']);
 
   it.each([
     ['Lee Ann', 'Ann Lee'],
@@ -82,6 +82,22 @@ describe('near misses', () => {
     expect([slips('abc', 'abc'), slips('abc', 'acb'), slips('abc', 'ac'), slips('', 'xy'), slips('elek', 'elke')]).toEqual([0, 1, 1, 2, 1]);
   });
 
+  it('stop counting where there are more slips than asked about', () => {
+    fc.assert(
+      fc.property(fc.string({ unit: fc.constantFrom('a', 'b', 'c'), maxLength: 9 }), fc.string({ unit: fc.constantFrom('a', 'b', 'c'), maxLength: 9 }), fc.nat(4), (one, other, most) => {
+        const all = slips(one, other);
+        const counted = slips(one, other, most);
+        expect(all <= most ? counted === all : counted > most).toBe(true);
+      }),
+    );
+  });
+
+  it('are looked for no longer where there are too many strays to be slips', () => {
+    const strays = Array.from({ length: 400 }, () => near.question('Anne Lee'));
+    expect(strays.filter((question) => question !== '').length).toBeLessThan(400);
+    expect(strays[0]).toBe(' Did you mean "Ann Lee"?');
+  });
+
   it('have one essence where only spacing, punctuation, accents and leading zeros differ', () => {
     expect(essence('mary-jo')).toBe(essence('mary jo'));
     expect(essence('lab 1 2')).not.toBe(essence('lab 12'));
@@ -89,6 +105,14 @@ describe('near misses', () => {
 });
 
 describe('large ranges', () => {
+  it('that cannot be read are listed up to 10,000 cells of a column, and then counted', () => {
+    const rows = [['Duty', 'Person', 'Rank'], ...Array.from({ length: 10_500 }, () => ['Choir', 'Ann', 'x'])];
+    const { faults } = readCase([rows, [['Person', 'Maximum'], ['Ann', 'y']]]);
+    expect(faults.length).toBe(10_002);
+    expect(faults[10_000].message).toBe('Pairs table, column Rank: found 500 more cells like these; expected a whole number from 0 to 1,000,000.');
+    expect(faults[10_001].place.table).toBe('People');
+  });
+
   it('end where their last filled row is, however far down they go', () => {
     const rows: unknown[][] = [['Duty', 'Person'], ['Choir', 'Ann']];
     for (let i = 0; i < 1_048_574; i++) rows.push([null, null]);

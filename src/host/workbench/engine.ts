@@ -59,6 +59,8 @@ export interface EngineFunction {
 export interface EngineContent {
   readonly id: number;
   readonly isFormula: boolean;
+  /** What was typed, for what is no formula. */
+  readonly content?: string;
   readonly compiledFormula?: { toFormulaString(getters: EngineGetters): string };
 }
 
@@ -67,11 +69,14 @@ export interface EngineEvaluated {
   readonly type: string;
   readonly value: string | number | boolean | null;
   readonly message?: string;
+  /** Where a text was taken for a link. */
+  readonly link?: object;
 }
 
 /** What a model tells. */
 export interface EngineGetters {
   getActiveSheetId(): string;
+  getSelectedZones(): readonly EngineZone[];
   getActivePosition(): EnginePosition;
   getSheetIds(): readonly string[];
   getSheetName(sheetId: string): string;
@@ -84,7 +89,14 @@ export interface EngineGetters {
   getCell(position: EnginePosition): EngineContent | undefined;
   getEvaluatedCell(position: EnginePosition): EngineEvaluated;
   getSpreadZone(position: EnginePosition): EngineZone | undefined;
+  /** What a formula would come to in a cell. */
+  evaluateFormulaResult(sheetId: string, formula: string, origin: EnginePosition): EngineCell | readonly (readonly EngineCell[])[];
   getRangeFromZone(sheetId: string, zone: EngineZone): unknown;
+}
+
+/** A change, or something asked of the page; only the former can be undone. */
+export interface EngineCommand {
+  readonly type: string;
 }
 
 /** A workbook in the engine. */
@@ -93,8 +105,8 @@ export interface EngineModel {
   readonly selection: { selectCell(col: number, row: number): unknown };
   dispatch(command: string, payload?: object): { readonly isSuccessful: boolean };
   exportData(): EngineData;
-  on(type: 'update', owner: object, callback: () => void): void;
-  off(type: 'update', owner: object): void;
+  on(type: 'command-dispatched', owner: object, callback: (command: EngineCommand) => void): void;
+  off(type: 'command-dispatched', owner: object): void;
 }
 
 /** A workbook as the engine loads and exports it. */
@@ -103,7 +115,22 @@ export interface EngineData {
   readonly sheets: readonly EngineSheet[];
   readonly styles: Readonly<Record<string, EngineStyle>>;
   readonly formats: Readonly<Record<string, string>>;
+  readonly borders: Readonly<Record<string, EngineBorder>>;
+  readonly settings: { readonly locale: EngineLocale; readonly disableCellAnimations?: boolean };
   readonly namedRanges: Readonly<Record<string, string>>;
+}
+
+/** How numbers and dates are typed and shown. */
+export interface EngineLocale {
+  readonly name: string;
+  readonly code: string;
+  readonly thousandsSeparator: string;
+  readonly decimalSeparator: string;
+  /** 1 is Monday. */
+  readonly weekStart: number;
+  readonly dateFormat: string;
+  readonly timeFormat: string;
+  readonly formulaArgSeparator: string;
 }
 
 /** One sheet of its data. */
@@ -113,13 +140,32 @@ export interface EngineSheet {
   readonly colNumber: number;
   readonly rowNumber: number;
   readonly cells: Readonly<Record<string, string>>;
-  /** Numbers of styles and formats, by the zone they hold in, such as `A1:B2`. */
+  /** Numbers of styles, formats and borders, by the zone they hold in, such as `A1:B2`. */
   readonly styles: Readonly<Record<string, number>>;
   readonly formats: Readonly<Record<string, number>>;
-  readonly cols: Readonly<Record<string, { readonly size?: number }>>;
+  readonly borders: Readonly<Record<string, number>>;
+  readonly cols: Readonly<Record<string, EngineHeader>>;
+  readonly rows: Readonly<Record<string, EngineHeader>>;
   readonly merges: readonly string[];
   readonly isVisible: boolean;
+  readonly areGridLinesVisible?: boolean;
+  readonly color?: string;
   readonly panes?: { readonly xSplit: number; readonly ySplit: number };
+}
+
+/** A column or a row: its size in pixels. */
+export interface EngineHeader {
+  readonly size?: number;
+  readonly isHidden?: boolean;
+}
+
+/** The lines around a cell. */
+export type EngineBorder = Readonly<Partial<Record<'top' | 'right' | 'bottom' | 'left', EngineLine>>>;
+
+/** One of them. */
+export interface EngineLine {
+  readonly style: 'thin' | 'medium' | 'thick' | 'dashed' | 'dotted';
+  readonly color: string;
 }
 
 /** How a cell looks. */
@@ -132,6 +178,7 @@ export interface EngineStyle {
   readonly fillColor?: string;
   readonly fontSize?: number;
   readonly align?: 'left' | 'center' | 'right';
+  readonly verticalAlign?: 'top' | 'middle' | 'bottom';
   readonly wrapping?: 'overflow' | 'wrap' | 'clip';
 }
 
@@ -143,12 +190,25 @@ export interface Engine {
     readonly functionRegistry: {
       add(name: string, fn: EngineFunction): void;
       replace(name: string, fn: EngineFunction): void;
+      contains(name: string): boolean;
     };
     readonly errorTypes: Set<string>;
+    readonly cellMenuRegistry: EngineRegistry;
+    readonly rowMenuRegistry: EngineRegistry;
+    readonly colMenuRegistry: EngineRegistry;
   };
   readonly helpers: {
     isNumber(text: string, locale: object): boolean;
     isDateTime(text: string, locale: object): boolean;
+    /** Throws where the format is unknown. */
+    formatValue(value: number, how: { format: string; locale: object }): string;
   };
-  readonly constants: { readonly DEFAULT_LOCALE: object };
+  readonly constants: { readonly DEFAULT_LOCALE: EngineLocale };
+  isCoreCommand(command: EngineCommand): boolean;
+}
+
+/** A list of things by name. */
+export interface EngineRegistry {
+  getKeys(): Iterable<string>;
+  remove(name: string): void;
 }

@@ -7,6 +7,7 @@ export class WorkbenchWorkbook implements WorkbookPort {
   readonly kind = 'workbench';
   #model: EngineModel;
   readonly #listeners = new Set<() => void>();
+  #isTold = true;
 
   constructor(model: EngineModel) {
     this.#model = model;
@@ -19,10 +20,10 @@ export class WorkbenchWorkbook implements WorkbookPort {
 
   /** Takes another workbook in place of this one. */
   replace(model: EngineModel): void {
-    this.#model.off('update', this);
+    this.#model.off('command-dispatched', this);
     this.#model = model;
     this.#listen();
-    this.#tell();
+    this.#tellSoon();
   }
 
   onRecalculated(listener: () => void): () => void {
@@ -44,7 +45,9 @@ export class WorkbenchWorkbook implements WorkbookPort {
   select(address: string): Promise<void> {
     const position = this.#position(address);
     if (position !== null) {
-      const from = this.#model.getters.getActiveSheetId();
+      const { getters } = this.#model;
+      const from = getters.getActiveSheetId();
+      if (!getters.isSheetVisible(position.sheetId)) this.#model.dispatch('SHOW_SHEET', { sheetId: position.sheetId });
       if (from !== position.sheetId) {
         this.#model.dispatch('ACTIVATE_SHEET', { sheetIdFrom: from, sheetIdTo: position.sheetId });
       }
@@ -70,10 +73,16 @@ export class WorkbenchWorkbook implements WorkbookPort {
   }
 
   #listen(): void {
-    this.#model.on('update', this, () => this.#tell());
+    this.#model.on('command-dispatched', this, () => this.#tellSoon());
   }
 
-  #tell(): void {
-    for (const listener of this.#listeners) listener();
+  /** One change is many commands, and the calculation comes after them: listeners are told once, when all is done. */
+  #tellSoon(): void {
+    if (!this.#isTold) return;
+    this.#isTold = false;
+    queueMicrotask(() => {
+      this.#isTold = true;
+      for (const listener of [...this.#listeners]) listener();
+    });
   }
 }

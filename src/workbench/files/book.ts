@@ -2,9 +2,26 @@
 export interface Book {
   readonly sheets: readonly BookSheet[];
   /** Named ranges; the reference as a formula writes it, such as `Inputs!A1:C40`. */
-  readonly names: readonly { readonly name: string; readonly reference: string }[];
+  readonly names: readonly BookName[];
+  /** Names for anything but one range (constants, formulas, names of one sheet only): kept for the file, unknown here. */
+  readonly otherNames?: readonly StoredName[];
   /** What the file held beyond this, in words; empty where nothing is lost. */
   readonly lost: readonly string[];
+}
+
+/** A named range. */
+export interface BookName {
+  readonly name: string;
+  readonly reference: string;
+}
+
+/** A name as a file stores it. */
+export interface StoredName {
+  readonly name: string;
+  /** What it stands for, without equals sign. */
+  readonly content: string;
+  /** The only sheet it is known on. */
+  readonly sheet?: string;
 }
 
 /** One sheet. */
@@ -14,6 +31,15 @@ export interface BookSheet {
   readonly cells: readonly BookCell[];
   /** Column widths in pixels, by column from 0. */
   readonly widths: ReadonlyMap<number, number>;
+  /** Row heights in pixels, by row from 0, where they were set. */
+  readonly heights?: ReadonlyMap<number, number>;
+  /** Hidden columns and rows, from 0. */
+  readonly hiddenColumns?: readonly number[];
+  readonly hiddenRows?: readonly number[];
+  /** False where the lines between the cells are not drawn. */
+  readonly gridLines?: boolean;
+  /** Colour of the tab as `#rrggbb`. */
+  readonly tabColour?: string;
   /** Merged ranges as `A1:B2`. */
   readonly merges: readonly string[];
   /** Rows and columns that stay in view. */
@@ -27,9 +53,10 @@ export interface BookCell {
   readonly column: number;
   /** As a person types it, with its equals sign; null for a plain value. */
   readonly formula: string | null;
-  /** The value, or the formula's last one; an error as its code in `error`. */
+  /** The value, or the formula's last one. */
   readonly value: string | number | boolean | null;
-  readonly error?: string;
+  /** True where the value is the code of an error, such as `#N/A`. */
+  readonly isError?: boolean;
   readonly style: BookStyle | null;
   /** A number format such as `0.00`; null for the general one. */
   readonly format: string | null;
@@ -48,5 +75,16 @@ export interface BookStyle {
   readonly fill?: string;
   readonly size?: number;
   readonly align?: 'left' | 'center' | 'right';
+  readonly vertical?: 'top' | 'middle' | 'bottom';
   readonly wrap?: boolean;
+  readonly border?: BookBorder;
+}
+
+/** The lines around a cell. */
+export type BookBorder = Readonly<Partial<Record<'top' | 'right' | 'bottom' | 'left', BookLine>>>;
+
+/** One of them. */
+export interface BookLine {
+  readonly style: 'thin' | 'medium' | 'thick' | 'dashed' | 'dotted';
+  readonly colour: string;
 }

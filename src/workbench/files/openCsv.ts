@@ -1,12 +1,10 @@
 import Papa from 'papaparse';
 import type { BookCell, BookSheet } from './book';
+import { freeSheetName } from './sheetNames';
 
 /** A number as people write it in such files; "001" and "1,5" stay text. */
 const NUMBER = /^-?(0|[1-9]\d{0,14})(\.\d+)?$/u;
-
-/** The longest name a sheet may have, and what it may not hold. */
-const LONGEST_NAME = 31;
-const FORBIDDEN = /[[\]:*?/\\]/gu;
+const SEPARATORS = [',', ';', '\t', '|'];
 
 /**
  * Reads a .csv or .tsv file as a sheet: separators and quotes are recognised, a byte order mark and
@@ -24,26 +22,27 @@ export function openCsv(fileName: string, text: string, taken: Set<string>): Boo
       cells.push({ row, column, formula: null, value: NUMBER.test(value) ? Number(value) : value, style: null, format: null });
     });
   });
-  return { name: sheetName(fileName, taken), hidden: false, cells, widths: widthsOf(cells), merges: [], frozen: { rows: 0, columns: 0 } };
+  const name = freeSheetName(fileName.replace(/\.[^.]*$/u, ''), taken);
+  return { name, hidden: false, cells, widths: widthsOf(cells), merges: [], frozen: { rows: 0, columns: 0 } };
+}
+
+/** The text of a file: UTF-8, or UTF-16 with its mark, or else what older office programs in the West write. */
+export function decodeText(bytes: Uint8Array): string {
+  const [first, second] = bytes;
+  if (first === 0xff && second === 0xfe) return new TextDecoder('utf-16le').decode(bytes);
+  if (first === 0xfe && second === 0xff) return new TextDecoder('utf-16be').decode(bytes);
+  try {
+    return new TextDecoder('utf-8', { fatal: true }).decode(bytes);
+  } catch {
+    return new TextDecoder('windows-1252').decode(bytes);
+  }
 }
 
 /** The separator that occurs most in the first line, quoted parts aside: headings hold few of the others. */
 function separatorOf(text: string): string {
   const firstLine = (/^[^\r\n]*/u.exec(text)?.[0] ?? '').replace(/"[^"]*"/gu, '');
   const count = (separator: string): number => firstLine.split(separator).length;
-  return [',', ';', '\t', '|'].reduce((best, separator) => (count(separator) > count(best) ? separator : best));
-}
-
-/** The file's name without its ending, cut and numbered until it is a free sheet name. */
-function sheetName(fileName: string, taken: Set<string>): string {
-  const base = fileName.replace(/\.[^.]*$/u, '').replace(FORBIDDEN, ' ').replace(/^'+|'+$/gu, '').trim() || 'Sheet';
-  for (let number = 1; ; number++) {
-    const ending = number === 1 ? '' : ` ${number}`;
-    const name = base.slice(0, LONGEST_NAME - ending.length) + ending;
-    if (taken.has(name.toLowerCase())) continue;
-    taken.add(name.toLowerCase());
-    return name;
-  }
+  return SEPARATORS.reduce((best, separator) => (count(separator) > count(best) ? separator : best));
 }
 
 /** Columns wide enough for most of what is in them. */

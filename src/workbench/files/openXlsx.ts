@@ -1,13 +1,23 @@
-import { readXlsx, type Cell, type CellStyle, type CellValue, type Sheet, type Workbook } from 'hucre';
+import { dateToSerial, readXlsx, type Cell, type CellValue, type Sheet, type Workbook } from 'hucre';
 import { columnLetters, parseCell } from '../../host/address';
-import type { Book, BookCell, BookSheet, BookStyle } from './book';
+import type { Book, BookCell, BookName, BookSheet, StoredName } from './book';
+import { lostParts } from './lost';
+import { sharedFormulas } from './sharedFormulas';
 import { toTyped } from './spelling';
+import { tableNames, withoutTables, type FileTable } from './structured';
+import { given, readColour, readStyle } from './styles';
 
 /** Pixels of a column as wide as one digit, near enough for the usual fonts. */
 const PIXELS_A_DIGIT = 7;
-const DAY = 86_400_000;
-/** Day 0 of a sheet's calendar. */
-const CALENDAR_START = Date.UTC(1899, 11, 30);
+const PIXELS_A_POINT = 4 / 3;
+/** Names that can stand for one range here: a sheet and one rectangle, or whole columns. */
+const ONE_RANGE = /^(?:'(?:[^']|'')+'|[\p{L}_][\p{L}\p{N}_.]*)!\$?[A-Z]{1,3}(?:\$?\d+)?(?::\$?[A-Z]{1,3}(?:\$?\d+)?)?$/iu;
+
+/** What a sheet is read with. */
+interface Surroundings {
+  readonly theme: readonly string[];
+  readonly tables: ReadonlyMap<string, FileTable>;
+}
 
 /**
  * Reads an .xlsx file.
@@ -21,55 +31,92 @@ export async function openXlsx(bytes: Uint8Array): Promise<Book> {
   } catch (error) {
     throw new Error(`This file cannot be read as an .xlsx workbook (${error instanceof Error ? error.message : String(error)}).`, { cause: error });
   }
-  const names = (workbook.namedRanges ?? [])
-    .filter(({ name }) => !name.startsWith('_xlnm.'))
-    .map(({ name, range }) => ({ name, reference: range.replaceAll('$', '') }));
+  const tables = fileTables(workbook);
+  const surroundings = {
+    theme: workbook.themeColors ?? [],
+    tables: new Map(tables.map((table) => [table.name.toLowerCase(), table])),
+  };
+  const { names, otherNames } = readNames(workbook);
+  const taken = new Set(names.map(({ name }) => name.toLowerCase()));
   return {
-    sheets: workbook.sheets.map(readSheet),
-    names: [...names, ...tableNames(workbook, new Set(names.map(({ name }) => name.toLowerCase())))],
-    lost: lostParts(workbook),
+    sheets: workbook.sheets.map((sheet) => readSheet(sheet, surroundings)),
+    names: [...names, ...tableNames(tables, taken)].map(({ name, reference }) => ({ name, reference: plain(reference) })),
+    otherNames,
+    lost: lostParts(bytes, workbook),
   };
 }
 
-/** Tables become named ranges, headings included, unless the name is taken. */
-function tableNames({ sheets }: Workbook, taken: ReadonlySet<string>): { name: string; reference: string }[] {
-  return sheets.flatMap(({ name: sheet, tables }) =>
-    (tables ?? []).flatMap(({ name, range }) => {
-      if (range === undefined || taken.has(name.toLowerCase())) return [];
-      return [{ name, reference: `${/^\w+$/u.test(sheet) ? sheet : `'${sheet.replaceAll("'", "''")}'`}!${range}` }];
+function readNames({ namedRanges }: Workbook): { names: BookName[]; otherNames: StoredName[] } {
+  const names: BookName[] = [];
+  const otherNames: StoredName[] = [];
+  for (const { name, range, scope } of namedRanges ?? []) {
+    if (name.startsWith('_xlnm.')) continue;
+    if (scope === undefined && ONE_RANGE.test(range)) names.push({ name, reference: range });
+    else otherNames.push({ name, content: range, ...given({ sheet: scope }) });
+  }
+  return { names, otherNames };
+}
+
+/** A reference without dollar signs; the name of its sheet may hold some. */
+function plain(reference: string): string {
+  const at = reference.lastIndexOf('!');
+  return reference.slice(0, at) + reference.slice(at).replaceAll('$', '');
+}
+
+function fileTables({ sheets }: Workbook): FileTable[] {
+  return sheets.flatMap((sheet) =>
+    (sheet.tables ?? []).flatMap(({ name, range, columns, showTotalRow }): FileTable[] => {
+      const [from, to] = (range ?? '').split(':').map((corner) => parseCell(corner));
+      if (from === undefined || from === null || to === undefined || to === null) return [];
+      const headings = columns.map((column) => column.name);
+      return [{ name, sheet: sheet.name, top: from.row, bottom: to.row, left: from.column, headings, hasTotals: showTotalRow === true }];
     }),
   );
 }
 
-function readSheet(sheet: Sheet): BookSheet {
+function readSheet(sheet: Sheet, surroundings: Surroundings): BookSheet {
   const cells: BookCell[] = [];
   const spilled = spilledCells(sheet);
+  const filledDown = sharedFormulas(sheet.cells ?? new Map<string, Cell>());
   sheet.rows.forEach((values, row) => {
     values.forEach((value, column) => {
-      const cell = sheet.cells?.get(`${row},${column}`);
-      if (spilled.has(`${columnLetters(column)}${row + 1}`)) value = null;
-      const read = readCell(row, column, value, cell);
+      const key = `${row},${column}`;
+      const stored = filledDown.get(key) ?? sheet.cells?.get(key)?.formula;
+      const formula = stored === undefined || stored === '' ? null : toTyped(withoutTables(stored, surroundings.tables, row));
+      const read = readCell(row, column, spilled.has(key) ? null : value, formula, sheet.cells?.get(key), surroundings.theme);
       if (read !== null) cells.push(read);
     });
   });
+  const columns = [...(sheet.columns ?? []).entries()];
+  const rows = [...(sheet.rowDefs ?? [])];
   return {
     name: sheet.name,
     hidden: sheet.hidden === true || sheet.veryHidden === true,
     cells,
-    widths: new Map(
-      (sheet.columns ?? []).flatMap(({ width }, column) =>
-        width === undefined ? [] : [[column, Math.round(width * PIXELS_A_DIGIT + 5)] as const],
-      ),
-    ),
+    widths: sizes(columns, ({ width }) => (width === undefined ? undefined : width * PIXELS_A_DIGIT + 5)),
+    heights: sizes(rows, ({ height }) => (height === undefined ? undefined : height * PIXELS_A_POINT)),
+    hiddenColumns: columns.flatMap(([column, { hidden }]) => (hidden === true ? [column] : [])),
+    hiddenRows: rows.flatMap(([row, { hidden }]) => (hidden === true ? [row] : [])),
+    gridLines: sheet.view?.showGridLines !== false,
+    ...given({ tabColour: readColour(sheet.view?.tabColor, surroundings.theme) }),
     merges: (sheet.merges ?? []).map(
-      ({ startRow, startCol, endRow, endCol }) =>
-        `${columnLetters(startCol)}${startRow + 1}:${columnLetters(endCol)}${endRow + 1}`,
+      ({ startRow, startCol, endRow, endCol }) => `${columnLetters(startCol)}${startRow + 1}:${columnLetters(endCol)}${endRow + 1}`,
     ),
     frozen: { rows: sheet.freezePane?.rows ?? 0, columns: sheet.freezePane?.columns ?? 0 },
   };
 }
 
-/** The cells a stored array formula fills beyond its own: their values come back with the calculation. */
+/** Sizes in whole pixels, where there are any. */
+function sizes<T>(headers: readonly (readonly [number, T])[], pixels: (header: T) => number | undefined): Map<number, number> {
+  return new Map(
+    headers.flatMap(([at, header]) => {
+      const size = pixels(header);
+      return size === undefined ? [] : [[at, Math.round(size)] as const];
+    }),
+  );
+}
+
+/** The cells a stored array formula fills beyond its own, as `row,column`: their values come back with the calculation. */
 function spilledCells({ cells }: Sheet): Set<string> {
   const spilled = new Set<string>();
   for (const cell of cells?.values() ?? []) {
@@ -78,69 +125,26 @@ function spilledCells({ cells }: Sheet): Set<string> {
     if (from === null || to === null || from === undefined || to === undefined) continue;
     for (let row = from.row; row <= to.row; row++) {
       for (let column = from.column; column <= to.column; column++) {
-        if (row !== from.row || column !== from.column) spilled.add(`${columnLetters(column)}${row + 1}`);
+        if (row !== from.row || column !== from.column) spilled.add(`${row},${column}`);
       }
     }
   }
   return spilled;
 }
 
-function readCell(row: number, column: number, value: CellValue, cell: Cell | undefined): BookCell | null {
-  const formula = cell?.formula === undefined ? null : toTyped(cell.formula);
-  const style = readStyle(cell?.style);
+function readCell(
+  row: number,
+  column: number,
+  value: CellValue,
+  formula: string | null,
+  cell: Cell | undefined,
+  theme: readonly string[],
+): BookCell | null {
+  const style = readStyle(cell?.style, theme);
   const isDate = value instanceof Date;
-  const plain = isDate ? (value.getTime() - CALENDAR_START) / DAY : value;
+  const plain = isDate ? dateToSerial(value) : value;
   if (formula === null && plain === null && style === null) return null;
-  const given = cell?.style?.numFmt;
-  const format = given === undefined || given === 'General' ? (isDate ? 'yyyy-mm-dd hh:mm' : null) : given;
-  return { row, column, formula, value: plain, style, format };
-}
-
-function readStyle(style: CellStyle | undefined): BookStyle | null {
-  if (style === undefined) return null;
-  const { font, fill, alignment } = style;
-  const solid = fill?.type === 'pattern' && fill.pattern === 'solid' ? colour(fill.fgColor?.rgb) : undefined;
-  const horizontal = alignment?.horizontal;
-  const entries = Object.entries({
-    bold: font?.bold === true ? true : undefined,
-    italic: font?.italic === true ? true : undefined,
-    underline: font?.underline !== undefined && font.underline !== false ? true : undefined,
-    strikethrough: font?.strikethrough === true ? true : undefined,
-    colour: colour(font?.color?.rgb),
-    fill: solid,
-    size: font?.size === undefined || font.size === 11 ? undefined : font.size,
-    align: horizontal === 'left' || horizontal === 'center' || horizontal === 'right' ? horizontal : undefined,
-    wrap: alignment?.wrapText === true ? true : undefined,
-  }).filter(([, value]) => value !== undefined);
-  return entries.length === 0 ? null : (Object.fromEntries(entries));
-}
-
-/** `FFAABBCC` and `AABBCC` become `#aabbcc`. */
-function colour(rgb: string | undefined): string | undefined {
-  return rgb === undefined || !/^[0-9a-f]{6,8}$/iu.test(rgb) ? undefined : `#${rgb.slice(-6).toLowerCase()}`;
-}
-
-const PARTS: readonly [keyof Sheet, string][] = [
-  ['charts', 'charts'],
-  ['images', 'pictures'],
-  ['pivotTables', 'pivot tables'],
-  ['conditionalRules', 'conditional formats'],
-  ['dataValidations', 'input checks (data validation)'],
-  ['threadedComments', 'comments'],
-  ['sparklines', 'sparklines'],
-  ['textBoxes', 'text boxes'],
-  ['protection', 'sheet protection'],
-  ['tables', 'tables (their ranges stay as named ranges)'],
-  ['slicers', 'slicers'],
-];
-
-function lostParts(workbook: Workbook): string[] {
-  const lost = PARTS.filter(([part]) =>
-    workbook.sheets.some((sheet) => {
-      const held = sheet[part];
-      return Array.isArray(held) ? held.length > 0 : held !== undefined && held !== null;
-    }),
-  ).map(([, words]) => words);
-  if ((workbook.externalLinks ?? []).length > 0) lost.push('links to other workbooks');
-  return lost;
+  const stored = cell?.style?.numFmt;
+  const format = stored === undefined || stored === 'General' ? (isDate ? 'dd/mm/yyyy' : null) : stored;
+  return { row, column, formula, value: plain, ...(cell?.type === 'error' ? { isError: true } : {}), style, format };
 }

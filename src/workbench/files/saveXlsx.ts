@@ -1,15 +1,27 @@
-import { writeXlsx, type Cell, type CellStyle, type CellValue, type ColumnDef, type WriteSheet } from 'hucre';
+import { writeXlsx, type Cell, type CellValue, type ColumnDef, type RowDef, type WriteSheet } from 'hucre';
 import { columnLetters, parseCell } from '../../host/address';
-import type { Book, BookCell, BookSheet, BookStyle } from './book';
-import { toStored, usesOurs } from './spelling';
+import type { Book, BookCell, BookSheet } from './book';
+import { isArrayFormula, toStored } from './spelling';
+import { given, writeColour, writeStyle } from './styles';
 
 const PIXELS_A_DIGIT = 7;
+const PIXELS_A_POINT = 4 / 3;
+/** Texts that look like an error are stored as formatted text, or they would come back as the error. */
+const ERROR_TEXT = /^#(?:N\/A|DIV\/0!|VALUE!|REF!|NAME\?|NUM!|NULL!|SPILL!|CALC!|BUSY!|GETTING_DATA)$/u;
 
-/** Writes an .xlsx file with formulas, their last values, and what they spilled. */
-export async function saveXlsx(book: Book): Promise<Uint8Array> {
+/**
+ * Writes an .xlsx file with formulas, their last values, and what they spilled.
+ *
+ * @param written when the file was made; now where it is left out
+ */
+export async function saveXlsx(book: Book, written = new Date()): Promise<Uint8Array> {
   return writeXlsx({
     sheets: book.sheets.map(writeSheet),
-    namedRanges: book.names.map(({ name, reference }) => ({ name, range: absolute(reference) })),
+    namedRanges: [
+      ...book.names.map(({ name, reference }) => ({ name, range: absolute(reference) })),
+      ...(book.otherNames ?? []).map(({ name, content, sheet }) => ({ name, range: content, ...given({ scope: sheet }) })),
+    ],
+    properties: { creator: 'Dutyproof workbench', created: written, modified: written },
   });
 }
 
@@ -21,71 +33,79 @@ function writeSheet(sheet: BookSheet): WriteSheet {
     const written = writeCell(cell);
     if (written !== null) cells.set(`${cell.row},${cell.column}`, written);
   }
-  const width = Math.max(0, ...sheet.cells.map(({ column }) => column + 1), ...[...sheet.widths.keys()].map((c) => c + 1));
   return {
     name: sheet.name,
     rows: Array.from(rows, (row) => Array.from(row ?? [], (value) => value ?? null)),
     cells,
-    columns: Array.from({ length: width }, (_, column): ColumnDef => {
-      const pixels = sheet.widths.get(column);
-      return pixels === undefined ? {} : { width: (pixels - 5) / PIXELS_A_DIGIT };
-    }),
+    columns: writeColumns(sheet),
+    rowDefs: writeRows(sheet),
     merges: sheet.merges.flatMap((merge) => {
       const [from, to] = merge.split(':').map((corner) => parseCell(corner));
       if (from === null || to === null || from === undefined || to === undefined) return [];
       return [{ startRow: from.row, startCol: from.column, endRow: to.row, endCol: to.column }];
     }),
+    view: {
+      showGridLines: sheet.gridLines !== false,
+      ...(sheet.tabColour === undefined ? {} : { tabColor: writeColour(sheet.tabColour) }),
+    },
     ...(sheet.frozen.rows + sheet.frozen.columns > 0 ? { freezePane: sheet.frozen } : {}),
     ...(sheet.hidden ? { hidden: true } : {}),
   };
 }
 
+function writeColumns({ cells, widths, hiddenColumns = [] }: BookSheet): ColumnDef[] {
+  const hidden = new Set(hiddenColumns);
+  const last = [...cells.map(({ column }) => column), ...widths.keys(), ...hidden].reduce((most, column) => Math.max(most, column), -1);
+  return Array.from({ length: last + 1 }, (_, column): ColumnDef => {
+    const pixels = widths.get(column);
+    return {
+      ...(pixels === undefined ? {} : { width: (pixels - 5) / PIXELS_A_DIGIT }),
+      ...(hidden.has(column) ? { hidden: true } : {}),
+    };
+  });
+}
+
+function writeRows({ heights = new Map<number, number>(), hiddenRows = [] }: BookSheet): Map<number, RowDef> {
+  const hidden = new Set(hiddenRows);
+  return new Map(
+    [...new Set([...heights.keys(), ...hidden])].map((row): [number, RowDef] => {
+      const pixels = heights.get(row);
+      return [
+        row,
+        { ...(pixels === undefined ? {} : { height: pixels / PIXELS_A_POINT }), ...(hidden.has(row) ? { hidden: true } : {}) },
+      ];
+    }),
+  );
+}
+
 /** The parts of a cell beyond its value; null where there are none. */
-function writeCell({ row, column, formula, value, error, style, format, spill }: BookCell): Partial<Cell> | null {
+function writeCell({ row, column, formula, value, isError, style, format, spill }: BookCell): Partial<Cell> | null {
   const look = writeStyle(style, format);
-  if (formula === null) return look === null ? null : { style: look };
-  const isArray = spill !== undefined || usesOurs(formula);
+  if (formula === null) {
+    const isText = typeof value === 'string' && isError !== true && ERROR_TEXT.test(value);
+    if (look === null && !isText) return null;
+    return { ...(isText ? { richText: [{ text: value }] } : {}), ...given({ style: look ?? undefined }) };
+  }
   const last = spill === undefined ? { row, column } : { row: row + spill.rows - 1, column: column + spill.columns - 1 };
   const corner = `${columnLetters(column)}${row + 1}`;
   return {
     type: 'formula',
     formula: toStored(formula),
-    formulaResult: error ?? value,
-    ...(isArray
+    formulaResult: value,
+    ...(spill !== undefined || isArrayFormula(formula)
       ? {
           formulaType: 'array' as const,
           formulaDynamic: true,
           formulaRef: spill === undefined ? corner : `${corner}:${columnLetters(last.column)}${last.row + 1}`,
         }
       : {}),
-    ...(look === null ? {} : { style: look }),
+    ...given({ style: look ?? undefined }),
   };
-}
-
-function writeStyle(style: BookStyle | null, format: string | null): CellStyle | null {
-  if (style === null && format === null) return null;
-  const { bold, italic, underline, strikethrough, colour, fill, size, align, wrap } = style ?? {};
-  const font = given({ bold, italic, underline, strikethrough, size, color: colour === undefined ? undefined : { rgb: rgb(colour) } });
-  const alignment = given({ horizontal: align, wrapText: wrap });
-  return given({
-    font: Object.keys(font).length > 0 ? font : undefined,
-    alignment: Object.keys(alignment).length > 0 ? alignment : undefined,
-    fill: fill === undefined ? undefined : ({ type: 'pattern', pattern: 'solid', fgColor: { rgb: rgb(fill) } } as const),
-    numFmt: format ?? undefined,
-  }) as CellStyle;
-}
-
-function given<T extends object>(entries: T): Partial<T> {
-  return Object.fromEntries(Object.entries(entries).filter(([, value]) => value !== undefined)) as Partial<T>;
-}
-
-function rgb(colour: string): string {
-  return `FF${colour.slice(1).toUpperCase()}`;
 }
 
 /** `Inputs!A1:C4` becomes `Inputs!$A$1:$C$4`, as files store names. */
 function absolute(reference: string): string {
   const at = reference.lastIndexOf('!');
   const cells = reference.slice(at + 1).replace(/\$?([A-Z]{1,3})\$?(\d+)/giu, (_, letters: string, row: string) => `$${letters}$${row}`);
-  return `${reference.slice(0, at + 1)}${cells}`;
+  return `${reference.slice(0, at + 1)}${/\d/u.test(cells) ? cells : cells.replace(/\$?([A-Z]{1,3})/giu, '$$$1')}`;
 }

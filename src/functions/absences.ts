@@ -1,0 +1,35 @@
+import { absences } from '../cover/absences';
+import type { Spill } from '../sheet/range';
+import { joinNames, writeTable } from '../sheet/write';
+import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
+import type { Solved } from './solved';
+
+const COLUMNS = [
+  { name: 'Person', description: 'everyone, in the order of the people table' },
+  { name: 'Holds', description: 'seats they hold in the best plan' },
+  { name: 'Lost', description: 'seats fewer that could be covered if this person alone were away' },
+  { name: 'Duties lost', description: 'the duties that then become short' },
+  { name: 'Taken over', description: 'which of their duties others would take, and who' },
+];
+
+export const ABSENCES: CaseFunction = {
+  id: 'ABSENCES',
+  summary: 'For every person, what would be lost if they alone were away, and who would take over the rest of their duties.',
+  parameters: CASE_PARAMETERS,
+  columns: COLUMNS,
+  example: '=DUTY.ABSENCES(Pairs, People, Duties, Rules)',
+  ofCase: spillAbsences,
+};
+
+function spillAbsences(solved: Solved): Spill {
+  const kase = solved.case;
+  const duty = (d: number): string => kase.duties[d].name;
+  const rows = absences(kase, solved.solution).map(({ person, holds, lost, dutiesLost, takenOver }) => [
+    kase.people[person].name,
+    holds.length,
+    lost,
+    joinNames(dutiesLost.map(duty)),
+    joinNames(takenOver.map(({ duty: d, by }) => (by.length === 0 ? duty(d) : `${duty(d)} (${joinNames(by.map((p) => kase.people[p].name))})`))),
+  ]);
+  return writeTable(headings(COLUMNS), rows, 'No people');
+}

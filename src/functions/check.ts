@@ -1,0 +1,102 @@
+import type { Case, Seat } from '../cover/case';
+import { LAST_PRIORITY } from '../cover/case';
+import { check, type Wrong } from '../cover/check';
+import type { Range, Spill } from '../sheet/range';
+import { writeTable } from '../sheet/write';
+import { CASE_PARAMETERS, headings, type RangeFunction } from './declaration';
+import { recall } from './memory';
+import type { Solved } from './solved';
+
+const COLUMNS = [
+  { name: 'Finding', description: 'what kind of thing is wrong' },
+  { name: 'Duty', description: 'the duty, where it is about one' },
+  { name: 'Person', description: 'the person, where it is about one' },
+  { name: 'Detail', description: 'what was found and what is allowed' },
+];
+
+export const CHECK: RangeFunction = {
+  id: 'CHECK',
+  summary: 'Everything wrong with a plan made or changed by hand, and by how many seats it is short of the best.',
+  parameters: [
+    { name: 'plan', description: 'The plan to check: columns Duty, Person. What DUTY.ASSIGN spilled will do.', optional: false },
+    ...CASE_PARAMETERS.slice(0, 4),
+  ],
+  columns: COLUMNS,
+  example: '=DUTY.CHECK(Current, Pairs, People, Duties, Rules)',
+  ofRanges: checkPlan,
+};
+
+function checkPlan([plan, ...ranges]: readonly (Range | null)[]): Spill {
+  const solved = recall([...ranges.slice(0, 4), plan ?? []]);
+  const kase = solved.case;
+  const seats = kase.current ?? [];
+  const rows = [
+    ...readingRows(solved),
+    ...check(kase, solved.solution.reduction.open, seats).map((entry) => wrongRow(kase, entry)),
+    ...shortRows(solved, seats),
+  ];
+  return writeTable(headings(COLUMNS), rows, 'Nothing is wrong: every rule is kept, and no plan covers more');
+}
+
+/** Names of the plan that are not listed, and rows given twice. An uncovered row of DUTY.ASSIGN names nobody and is right. */
+function readingRows({ reading }: Solved): string[][] {
+  return reading.findings
+    .filter(({ table, finding }) => table === 'Current' && finding !== 'Incomplete row')
+    .map(({ row, finding, detail }) => [finding, '', '', `Row ${row} of the plan: ${detail}`]);
+}
+
+function wrongRow(kase: Case, entry: Wrong): string[] {
+  const { kind, duty, person } = entry;
+  const name = duty === null ? '' : kase.duties[duty].name;
+  return [kind, name, person === null ? '' : kase.people[person].name, detailOf(entry)];
+}
+
+function detailOf({ kind, found, allowed, label }: Wrong): string {
+  switch (kind) {
+    case 'Fixed not kept':
+      return 'A Fixed rule gives this seat to this person; the plan does not.';
+    case 'Barred':
+      return 'A Barred rule says never.';
+    case 'Away':
+      return `The person is Away in "${label}".`;
+    case 'Not eligible':
+      return 'The pairs do not list this person for this duty.';
+    case 'Too many':
+      return `${found} hold it; it needs ${allowed}.`;
+    case 'Uncovered':
+      return `${found} of ${allowed} seats are held.`;
+    case 'Over maximum':
+      return `Holds ${found}; the maximum is ${allowed}.`;
+    case 'Below minimum':
+      return `Holds ${found}; the minimum is ${allowed}.`;
+    case 'Over a limit':
+      return `Holds ${found} in "${label}"; at most ${allowed} ${allowed === 1 ? 'is' : 'are'} allowed.`;
+  }
+}
+
+/** How the plan's cover compares with the best: in all, and where urgent seats are given up for less urgent ones. */
+function shortRows(solved: Solved, seats: readonly Seat[]): string[][] {
+  const kase = solved.case;
+  const held = new Int32Array(kase.duties.length);
+  for (const { duty } of seats) held[duty]++;
+  const mine = coverByPriority(kase, held);
+  const best = coverByPriority(kase, solved.solution.plan.heldOfDuty);
+  const total = (cover: Map<number, number>): number => [...cover.values()].reduce((sum, count) => sum + count, 0);
+  const short = total(best) - total(mine);
+  const rows: string[][] = [];
+  if (short > 0) {
+    rows.push(['Short of the best', '', '', `The plan covers ${total(mine)} seats; ${total(best)} can be covered, ${short} more.`]);
+  }
+  const first = [...best.keys()].sort((a, b) => a - b).find((priority) => mine.get(priority) !== best.get(priority));
+  if (first !== undefined && mine.get(first)! < best.get(first)!) {
+    const label = first === LAST_PRIORITY ? 'Duties without priority' : `Priority ${first}`;
+    rows.push(['Short of the best', '', '', `${label}: ${mine.get(first)} seats are covered; ${best.get(first)} can be, more urgent ones kept.`]);
+  }
+  return rows;
+}
+
+function coverByPriority({ duties }: Case, held: Int32Array): Map<number, number> {
+  const cover = new Map<number, number>();
+  duties.forEach(({ priority, need }, d) => cover.set(priority, (cover.get(priority) ?? 0) + Math.min(need, held[d])));
+  return cover;
+}

@@ -1,0 +1,145 @@
+import { columnLetters } from '../../host/address';
+import type { Engine, EngineBorder, EngineData, EngineHeader, EngineLocale, EngineSheet, EngineStyle } from '../../host/workbench/engine';
+import type { Book, BookCell, BookSheet, BookStyle } from './book';
+import { formatTable, type FormatTable } from './formats';
+import { given } from './styles';
+
+/** The version of its data that the engine at hand writes and reads as it is. */
+const DATA_VERSION = '19.3.2';
+/** Room beyond what a file holds, for what is typed and spilled. */
+const SPARE_ROWS = 300;
+const SPARE_COLUMNS = 12;
+
+/** Dates as in Britain; numbers and formulas as files hold them, so that what is typed is what is stored. */
+const LOCALE: EngineLocale = {
+  name: 'English (UK)',
+  code: 'en_GB',
+  thousandsSeparator: ',',
+  decimalSeparator: '.',
+  weekStart: 1,
+  dateFormat: 'dd/mm/yyyy',
+  timeFormat: 'hh:mm:ss',
+  formulaArgSeparator: ',',
+};
+
+/** Rows and columns of a sheet. */
+export interface Room {
+  readonly rows: number;
+  readonly columns: number;
+}
+
+/**
+ * A book as the engine loads it.
+ *
+ * @param room how large sheets must be at least, by name
+ */
+export function toEngineData(book: Book, engine: Engine, room: ReadonlyMap<string, Room> = new Map()): EngineData {
+  const numbered = { styles: new Numbered<EngineStyle>(), formats: new Numbered<string>(), borders: new Numbered<EngineBorder>() };
+  const formats = formatTable(book, engine);
+  const sheets = book.sheets.map((sheet, i) => {
+    const loaded = toEngineSheet(sheet, `sheet${i + 1}`, numbered, formats, engine);
+    const { rows, columns } = room.get(sheet.name) ?? { rows: 0, columns: 0 };
+    return { ...loaded, rowNumber: Math.max(loaded.rowNumber, rows), colNumber: Math.max(loaded.colNumber, columns) };
+  });
+  return {
+    version: DATA_VERSION,
+    sheets,
+    styles: numbered.styles.table(),
+    formats: numbered.formats.table(),
+    borders: numbered.borders.table(),
+    settings: { locale: LOCALE, disableCellAnimations: true },
+    namedRanges: Object.fromEntries(book.names.map(({ name, reference }) => [name, reference])),
+  };
+}
+
+/** Numbers things from 1, equal ones alike. */
+class Numbered<T> {
+  readonly #numbers = new Map<string, number>();
+  readonly #table: Record<string, T> = {};
+
+  number(thing: T): number {
+    const key = JSON.stringify(thing);
+    const known = this.#numbers.get(key);
+    if (known !== undefined) return known;
+    const number = this.#numbers.size + 1;
+    this.#numbers.set(key, number);
+    this.#table[number] = thing;
+    return number;
+  }
+
+  table(): Record<string, T> {
+    return this.#table;
+  }
+}
+
+function toEngineSheet(
+  sheet: BookSheet,
+  id: string,
+  numbered: { styles: Numbered<EngineStyle>; formats: Numbered<string>; borders: Numbered<EngineBorder> },
+  formats: FormatTable,
+  engine: Engine,
+): EngineSheet {
+  const cells: Record<string, string> = {};
+  const looks = { styles: {} as Record<string, number>, formats: {} as Record<string, number>, borders: {} as Record<string, number> };
+  let rowNumber = 0;
+  let colNumber = 0;
+  for (const cell of sheet.cells) {
+    const place = `${columnLetters(cell.column)}${cell.row + 1}`;
+    const content = cell.formula ?? literal(cell, engine);
+    if (content !== '') cells[place] = content;
+    const { border, ...style } = toEngineStyle(cell.style ?? {});
+    if (Object.keys(style).length > 0) looks.styles[place] = numbered.styles.number(style);
+    if (border !== undefined) looks.borders[place] = numbered.borders.number(border);
+    const format = cell.format === null ? null : (formats.toEngine.get(cell.format) ?? null);
+    if (format !== null) looks.formats[place] = numbered.formats.number(format);
+    rowNumber = Math.max(rowNumber, cell.row + 1);
+    colNumber = Math.max(colNumber, cell.column + 1);
+  }
+  return {
+    id,
+    name: sheet.name,
+    rowNumber: Math.max(100, rowNumber + SPARE_ROWS),
+    colNumber: Math.max(26, colNumber + SPARE_COLUMNS),
+    cells,
+    ...looks,
+    cols: headers(sheet.widths, sheet.hiddenColumns),
+    rows: headers(sheet.heights, sheet.hiddenRows),
+    merges: sheet.merges,
+    isVisible: !sheet.hidden,
+    areGridLinesVisible: sheet.gridLines !== false,
+    ...given({ color: sheet.tabColour }),
+    panes: { xSplit: sheet.frozen.columns, ySplit: sheet.frozen.rows },
+  };
+}
+
+function headers(sizes: ReadonlyMap<number, number> = new Map(), hidden: readonly number[] = []): Record<string, EngineHeader> {
+  const table: Record<string, EngineHeader> = {};
+  for (const [at, size] of sizes) table[at] = { size };
+  for (const at of hidden) table[at] = { ...table[at], isHidden: true };
+  return table;
+}
+
+/** A value as it would be typed; text that would be read as something else gets an apostrophe before it. */
+function literal({ value, isError }: BookCell, { helpers }: Engine): string {
+  if (value === null) return '';
+  if (typeof value === 'boolean') return value ? 'TRUE' : 'FALSE';
+  if (typeof value === 'number') return String(value);
+  if (isError === true) return value;
+  const text = value.trim();
+  const isMisread =
+    /^['=+\-@#]/u.test(value) ||
+    /^(?:true|false)$/iu.test(text) ||
+    helpers.isNumber(text, LOCALE) ||
+    helpers.isDateTime(text, LOCALE);
+  return isMisread ? `'${value}` : value;
+}
+
+function toEngineStyle({ colour, fill, size, wrap, vertical, border, ...rest }: BookStyle): EngineStyle & { border?: EngineBorder } {
+  const lines = Object.entries(border ?? {}).map(([side, line]) => [side, { style: line.style, color: line.colour }]);
+  return {
+    ...rest,
+    ...given({ textColor: colour, fillColor: fill, fontSize: size, verticalAlign: vertical }),
+    ...(wrap === true ? { wrapping: 'wrap' as const } : {}),
+    ...(lines.length > 0 ? { border: Object.fromEntries(lines) as EngineBorder } : {}),
+  };
+}
