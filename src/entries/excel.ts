@@ -4,20 +4,26 @@ import { registerInExcel } from '../host/excel/register';
 import { ExcelWorkbook } from '../host/excel/workbook';
 import { mountPane } from '../pane/mount';
 
-/** How long Office's script may take to say where it runs, in milliseconds: without a network it never does. */
+/** Milliseconds until the page says that it waits for Office's script, which without a network never answers. */
 const PATIENCE = 10_000;
+
+const ELSEWHERE = 'This page is the Dutyproof pane. Open it from Excel, where the add-in is installed.';
+const WAITING =
+  'Excel has not answered yet. If this stays, check the network connection, then close this pane and open it again.';
 
 const journal = new Journal();
 registerInExcel(FUNCTIONS, journal);
 void start();
 
 async function start(): Promise<void> {
-  const host = await hostOfPage();
   await pageIsRead();
   const root = document.getElementById('pane');
   if (root === null) return;
+  const waiting = setTimeout(() => (root.textContent = WAITING), PATIENCE);
+  const host = await hostOfPage();
+  clearTimeout(waiting);
   if (host === 'Excel') mountPane(root, new ExcelWorkbook(), journal);
-  else root.textContent = 'This page is the Dutyproof pane. Open it from Excel, where the add-in is installed.';
+  else root.textContent = ELSEWHERE;
 }
 
 /** Our script runs in the head, before there is a body. */
@@ -26,10 +32,9 @@ async function pageIsRead(): Promise<void> {
   await new Promise((resolve) => document.addEventListener('DOMContentLoaded', resolve, { once: true }));
 }
 
-/** The name of the Office program around the page, or null where there is none. */
+/** The name of the Office program around the page, null where there is none; waits as long as Office does. */
 async function hostOfPage(): Promise<string | null> {
   if (typeof Office === 'undefined') return null;
-  const late = new Promise<null>((resolve) => setTimeout(() => resolve(null), PATIENCE));
-  const ready = Office.onReady().then(({ host }) => (host === null ? null : String(host)));
-  return Promise.race([ready, late]);
+  const { host } = await Office.onReady();
+  return host === null ? null : String(host);
 }

@@ -46,7 +46,8 @@ export function mountPane(root: HTMLElement, port: WorkbookPort, journal: Journa
   };
   const refresh = async (): Promise<void> => {
     const turn = ++refreshes;
-    await forgetGone(port, journal);
+    // A busy host (Excel, while a cell is being edited) does not tell its formulas: then nothing is forgotten.
+    await forgetGone(port, journal).catch(() => undefined);
     if (turn === refreshes) draw();
   };
   const soon = (): void => {
