@@ -55,6 +55,8 @@ export function layOut(kase: Case, open: OpenPairs, openPair: Int32Array, nestin
     dutyNode: nodes.duty,
     dutyArc,
     personNode: nodes.person,
+    firstLimit: nodes.firstLimit,
+    nestings,
     personArc,
     firstPairArc,
     openPair,

@@ -4,8 +4,10 @@ import type { LimitSet } from './limits';
 export interface LimitNode {
   /** Index of the node this one lies inside, or -1 for the root. */
   readonly parent: number;
-  /** The most duties that may pass this node. */
+  /** The most duties that may pass this node, beside Fixed ones. */
   readonly most: number;
+  /** The set that says so. */
+  readonly set: LimitSet;
 }
 
 /** The limits of one person as a tree. */
@@ -49,7 +51,10 @@ export function nest(
       return { one: set, other: nodes[Math.max(parent, innermost[stray])].set };
     }
     if (parent !== -1 && nodes[parent].size === members.length) {
-      nodes[parent].most = Math.min(nodes[parent].most, most);
+      if (most < nodes[parent].most) {
+        nodes[parent].most = most;
+        nodes[parent].set = set;
+      }
       continue;
     }
     for (const i of members) innermost[i] = nodes.length;

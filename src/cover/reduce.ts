@@ -32,6 +32,9 @@ export interface Reduction {
   readonly personNode: Int32Array;
   /** The arc from each person's root to the sink, by person number. */
   readonly personArc: Int32Array;
+  /** The first node of each person's limits, by person number; the others follow it. */
+  readonly firstLimit: Int32Array;
+  readonly nestings: Nestings;
   /** The first pair arc; pair arcs follow each other in the order of `openPair`. */
   readonly firstPairArc: number;
   /** The pair of the case behind each pair arc. */

@@ -8,6 +8,7 @@ import { FINDINGS } from './findings';
 import { GRID } from './grid';
 import { LOADS } from './loads';
 import { PAIRS } from './pairs';
+import { PROOF } from './proof';
 import { REMEDIES } from './remedies';
 import { STEPS } from './steps';
 import { SUMMARY } from './summary';
@@ -24,6 +25,7 @@ export const FUNCTIONS: readonly CellFunction[] = [
   ABSENCES,
   REMEDIES,
   STEPS,
+  PROOF,
   SUMMARY,
   FINDINGS,
   CHECK,
