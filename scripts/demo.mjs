@@ -17,14 +17,18 @@ const TABLES = [
 const PARAMETERS = ['Pairs', 'People', 'Duties', 'Rules'];
 /** Blank rows below each table that its name takes in, so that rows can be added. */
 const ROOM = 20;
+/** Rows below the proof that its names take in, since it grows with the case. */
+const PROOF_ROOM = 300;
 const TITLE_ROW = 0;
 const HEADING_ROW = 1;
 
 /** @returns {Promise<any>} the demo as a book */
 export async function demoBook() {
-  const [sheets, { invoke }, { Journal }, { FUNCTIONS }, { columnLetters }] = await Promise.all(
+  const [sheets, reasons, { PROOF_NAMES }, { invoke }, { Journal }, { FUNCTIONS }, { columnLetters }] = await Promise.all(
     [
       'src/workbench/answerSheets.ts',
+      'src/workbench/reasonSheets.ts',
+      'src/functions/proofChecks.ts',
       'src/functions/invoke.ts',
       'src/functions/journal.ts',
       'src/functions/registry.ts',
@@ -41,8 +45,33 @@ export async function demoBook() {
     if (result.kind === 'fault') throw new Error(result.message);
     return result.spill;
   };
-  const results = [sheets.resultsSheet('Results', PARAMETERS), sheets.gridSheet('Grid', PARAMETERS, tables.People.length - 1)];
-  return { sheets: [sheet, ...results.map((empty) => withAnswers(empty, answer))], names, lost: [] };
+  const empty = [
+    sheets.resultsSheet('Results', PARAMETERS),
+    sheets.gridSheet('Grid', PARAMETERS, tables.People.length - 1),
+    reasons.reasonsSheet('Why', PARAMETERS),
+    reasons.proofSheet('Proof', PARAMETERS),
+  ];
+  const answered = empty.map((one) => withAnswers(one, answer));
+  const columns = columnNames(tables, names, answered.at(-1), PROOF_NAMES, columnLetters);
+  return { sheets: [sheet, ...answered], names: [...names, ...columns], lost: [] };
+}
+
+/** Names of the columns that the native formulas of the proof use: of the input tables, and of the proof itself. */
+function columnNames(tables, names, proof, wanted, columnLetters) {
+  const rowsOfProof = Math.max(...proof.cells.map(({ row }) => row)) + 1 + PROOF_ROOM;
+  const columns = [];
+  for (const { name, reference } of names) {
+    const [, first, top, bottom] = /!([A-Z]+)(\d+):[A-Z]+(\d+)$/u.exec(reference);
+    const left = Array.from(first).reduce((sum, letter) => sum * 26 + letter.charCodeAt(0) - 64, 0) - 1;
+    for (const [column, heading] of Object.entries(wanted[name.toLowerCase()])) {
+      const letters = columnLetters(left + tables[name][0].indexOf(heading));
+      columns.push({ name: column, reference: `Inputs!${letters}${Number(top) + 1}:${letters}${bottom}` });
+    }
+  }
+  Object.keys(wanted.proof).forEach((column, i) => {
+    columns.push({ name: column, reference: `Proof!${columnLetters(i)}3:${columnLetters(i)}${rowsOfProof}` });
+  });
+  return columns;
 }
 
 /** The input sheet, and the names of its tables. */
@@ -73,7 +102,7 @@ function inputSheet(tables, { HEADING, TITLE }, columnLetters) {
 function withAnswers(sheet, answer) {
   const cells = new Map(sheet.cells.map((cell) => [`${cell.row},${cell.column}`, cell]));
   for (const { row, column, formula } of sheet.cells) {
-    if (formula === null) continue;
+    if (formula === null || !formula.startsWith('=DUTY.')) continue;
     const spill = answer(formula);
     spill.forEach((values, i) => {
       values.forEach((value, j) => {

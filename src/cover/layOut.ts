@@ -8,7 +8,7 @@ const SINK = 1;
 
 /** Writes the nodes and arcs of a reduction, in name order throughout. */
 export function layOut(kase: Case, open: OpenPairs, openPair: Int32Array, nestings: Nestings): Reduction {
-  const priorities = [...new Set(kase.duties.map((duty) => duty.priority))].sort((a, b) => a - b);
+  const { priorities, classOfDuty } = classify(kase);
   const needLeft = kase.duties.map((duty, d) => Math.max(0, duty.need - open.fixedOfDuty[d]));
   const nodes = numberNodes(kase, priorities.length, nestings);
   const limitCount = nodes.count - 2 - priorities.length - kase.duties.length - kase.people.length;
@@ -16,8 +16,6 @@ export function layOut(kase: Case, open: OpenPairs, openPair: Int32Array, nestin
     priorities.length + kase.duties.length + openPair.length + limitCount + kase.people.length,
   );
 
-  const classNumber = new Map(priorities.map((priority, c) => [priority, c]));
-  const classOfDuty = Int32Array.from(kase.duties, (duty) => classNumber.get(duty.priority)!);
   const classNeed = new Float64Array(priorities.length);
   needLeft.forEach((need, d) => (classNeed[classOfDuty[d]] += need));
   const classes: PriorityClass[] = priorities.map((priority, c) => {
@@ -61,6 +59,13 @@ export function layOut(kase: Case, open: OpenPairs, openPair: Int32Array, nestin
     firstPairArc,
     openPair,
   };
+}
+
+/** The priorities that occur, most urgent first, and the place of each duty's among them. */
+function classify({ duties }: Case): { priorities: number[]; classOfDuty: Int32Array } {
+  const priorities = [...new Set(duties.map(({ priority }) => priority))].sort((a, b) => a - b);
+  const place = new Map(priorities.map((priority, c) => [priority, c]));
+  return { priorities, classOfDuty: Int32Array.from(duties, ({ priority }) => place.get(priority)!) };
 }
 
 interface NodeNumbers {

@@ -1,4 +1,3 @@
-import { absences } from '../cover/absences';
 import type { Spill } from '../sheet/range';
 import { joinNames, writeTable } from '../sheet/write';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
@@ -24,7 +23,7 @@ export const ABSENCES: CaseFunction = {
 function spillAbsences(solved: Solved): Spill {
   const kase = solved.case;
   const duty = (d: number): string => kase.duties[d].name;
-  const rows = absences(kase, solved.solution).map(({ person, holds, lost, dutiesLost, takenOver }) => [
+  const rows = solved.absences.map(({ person, holds, lost, dutiesLost, takenOver }) => [
     kase.people[person].name,
     holds.length,
     lost,

@@ -1,8 +1,6 @@
-import { remedies } from '../cover/remedies';
 import type { Spill } from '../sheet/range';
 import { writeTable } from '../sheet/write';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
-import { crossingMessage, Refusal } from './refusal';
 import type { Solved } from './solved';
 
 const COLUMNS = [
@@ -25,12 +23,7 @@ export const REMEDIES: CaseFunction = {
 function spillRemedies(solved: Solved): Spill {
   const kase = solved.case;
   const { plan } = solved.solution;
-  const found = remedies(kase);
-  if (found === null) {
-    throw new Refusal('There are more than a million possible pairs of duties and people to look at. Ask about a part of the duties.');
-  }
-  if ('crossing' in found) throw new Refusal(crossingMessage(kase, found));
-  if (found.faults.length > 0) throw new Refusal(`The remedies could not be proven cheapest: ${found.faults[0]}`);
+  const found = solved.remedies;
   const rows: (string | number)[][] = found.changes.map(({ person, duty, price }, i) => [
     i + 1,
     duty === null ? 'one more place' : 'make eligible',
@@ -39,8 +32,11 @@ function spillRemedies(solved: Solved): Spill {
     price,
   ]);
   const left = plan.needed - found.covered;
-  if (left > 0) {
-    rows.push(['', `${left} ${left === 1 ? 'seat stays' : 'seats stay'} uncovered: no change that is allowed helps`, '', '', '']);
-  }
+  if (left > 0) rows.push(['', beyondHelp(left), '', '', '']);
   return writeTable(headings(COLUMNS), rows, 'No change is needed: every seat is covered');
+}
+
+/** What no change can mend. */
+export function beyondHelp(seats: number): string {
+  return `${seats} ${seats === 1 ? 'seat stays' : 'seats stay'} uncovered: no change that is allowed helps`;
 }

@@ -1,5 +1,7 @@
+import { absences, type Absence } from '../cover/absences';
 import type { Case } from '../cover/case';
 import { fingerprint } from '../cover/fingerprint';
+import { remedies, type Remedies } from '../cover/remedies';
 import { shortages, type Shortage } from '../cover/shortage';
 import { solve, type Solution } from '../cover/solve';
 import { usedFeatures } from '../sheet/features';
@@ -16,6 +18,8 @@ export class Solved {
   readonly reading: Reading;
   #solution: Solution | Error | null = null;
   #shortages: readonly Shortage[] | null = null;
+  #absences: readonly Absence[] | null = null;
+  #remedies: Remedies | Error | null = null;
   #fingerprint: string | null = null;
 
   constructor(ranges: readonly (Range | null)[]) {
@@ -51,12 +55,43 @@ export class Solved {
   }
 
   /**
+   * What the absence of each person would cost.
+   * @throws like `solution`
+   */
+  get absences(): readonly Absence[] {
+    this.#absences ??= absences(this.case, this.solution);
+    return this.#absences;
+  }
+
+  /**
+   * The cheapest remedies.
+   * @throws like `solution`; Refusal also where there is too much to look at
+   */
+  get remedies(): Remedies {
+    this.#remedies ??= this.#findRemedies();
+    if (this.#remedies instanceof Error) throw this.#remedies;
+    return this.#remedies;
+  }
+
+  /**
    * A short text that is equal for equal cases, whatever the order of their rows.
    * @throws InputFault like `case`
    */
   get fingerprint(): string {
     this.#fingerprint ??= fingerprint(this.case);
     return this.#fingerprint;
+  }
+
+  #findRemedies(): Remedies | Error {
+    const kase = this.case;
+    const { plan } = this.solution;
+    if (plan.covered === plan.needed) return { changes: [], covered: plan.covered, faults: [] };
+    const found = remedies(kase);
+    if (found === null) {
+      return new Refusal('There are more than a million possible pairs of duties and people to look at. Ask about a part of the duties.');
+    }
+    if ('crossing' in found) return new Refusal(crossingMessage(kase, found));
+    return found.faults.length > 0 ? new Refusal(`The remedies could not be proven cheapest: ${found.faults[0]}`) : found;
   }
 
   #solve(): Solution | Error {

@@ -1,9 +1,11 @@
 import { LAST_PRIORITY } from '../cover/case';
 import type { Call } from '../functions/journal';
-import { shortageReason } from '../functions/reasons';
+import { knotReason, shortageReason } from '../functions/reasons';
+import { beyondHelp } from '../functions/remedies';
 import type { Solved } from '../functions/solved';
 import { parseAddress } from '../host/address';
 import type { Finding } from '../sheet/fault';
+import { joinNames } from '../sheet/write';
 
 /** What the pane shows, worked out from the calls alone. */
 export interface PaneModel {
@@ -27,6 +29,12 @@ export interface CaseView {
   /** How far the plan is proven, in words; '' where there is no plan. */
   readonly proof: string;
   readonly short: readonly { readonly duty: string; readonly seats: number; readonly reason: string }[];
+  /** Why seats stay uncovered, bottleneck by bottleneck. */
+  readonly bottlenecks: readonly { readonly number: number; readonly seats: number; readonly reason: string }[];
+  /** The cheapest remedies in words; null where the case is too large to look while typing. */
+  readonly remedies: readonly string[] | null;
+  /** People whose absence would cost seats, the most first; null as above. */
+  readonly fragile: readonly { readonly person: string; readonly seats: number; readonly duties: string }[] | null;
   readonly findings: readonly FindingGroup[];
   /** Why there is no plan, in words: input that cannot be read, or what is not answered yet. */
   readonly errors: readonly string[];
@@ -99,21 +107,67 @@ function caseView(solved: Solved, calls: readonly Call[]): CaseView {
   const sheets = [...new Set(cells.map(({ address }) => parseAddress(address)?.sheet ?? 'a cell'))];
   const common = { id: cells[0].address, cells, sheets, findings: groupFindings(findings), errors };
   if (faults.length > 0 || !isSolvable(solved)) {
-    return { ...common, seats: null, priorities: [], proof: '', short: [], fingerprint: '' };
+    return { ...common, seats: null, priorities: [], proof: '', short: [], bottlenecks: [], remedies: [], fragile: [], fingerprint: '' };
   }
   const { plan, faults: proofFaults } = solved.solution;
   return {
     ...common,
     seats: { needed: plan.needed, covered: plan.covered },
     priorities: countPriorities(solved),
-    proof: proofFaults.length === 0 ? 'No plan covers more: proven.' : `Not proven: ${proofFaults[0]}`,
+    proof: proofFaults.length === 0 ? 'No plan is better: proven.' : `Not proven: ${proofFaults[0]}`,
     short: solved.shortages.map((shortage) => ({
       duty: solved.case.duties[shortage.duty].name,
       seats: shortage.short,
       reason: shortageReason(solved.case, shortage),
     })),
+    bottlenecks: bottleneckViews(solved),
+    remedies: isSmall(solved) ? remedyViews(solved) : null,
+    fragile: isSmall(solved) ? fragileViews(solved) : null,
     fingerprint: solved.fingerprint,
   };
+}
+
+/** Small enough for remedies and absences to be worked out at every keystroke. */
+function isSmall({ case: { pairs, duties, people } }: Solved): boolean {
+  return pairs.count <= 5_000 && duties.length * people.length <= 40_000;
+}
+
+function bottleneckViews(solved: Solved): CaseView['bottlenecks'] {
+  const knots = [...new Set(solved.shortages.map(({ knot }) => knot))].sort((a, b) => a.number - b.number);
+  return knots.map((knot) => ({ number: knot.number, seats: knot.needed - knot.places, reason: knotReason(solved.case, knot) }));
+}
+
+function remedyViews(solved: Solved): string[] | null {
+  const { duties, people } = solved.case;
+  const { plan } = solved.solution;
+  const found = remediesOf(solved);
+  if (found === null) return null;
+  const { changes, covered } = found;
+  const words = changes.map(({ person, duty }) =>
+    duty === null ? `One more place for ${people[person].name}` : `Make ${people[person].name} eligible for ${duties[duty].name}`,
+  );
+  return covered === plan.needed ? words : [...words, beyondHelp(plan.needed - covered)];
+}
+
+/** Limits that are nested among the pairs listed may cross among those that could be. */
+function remediesOf(solved: Solved): Solved['remedies'] | null {
+  try {
+    return solved.remedies;
+  } catch {
+    return null;
+  }
+}
+
+function fragileViews(solved: Solved): NonNullable<CaseView['fragile']> {
+  const { duties, people } = solved.case;
+  return solved.absences
+    .filter(({ lost }) => lost > 0)
+    .sort((a, b) => b.lost - a.lost)
+    .map(({ person, lost, dutiesLost }) => ({
+      person: people[person].name,
+      seats: lost,
+      duties: joinNames(dutiesLost.map((d) => duties[d].name), 4),
+    }));
 }
 
 /** A case may be well written and still ask for what is not answered yet. */

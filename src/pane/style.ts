@@ -3,7 +3,7 @@ export const STYLE = `
 .dp-pane {
   --dp-ground: #fbfaf7; --dp-card: #ffffff; --dp-ink: #23282b; --dp-soft: #565f64; --dp-line: #d9d5cb;
   --dp-good: #1f5a4c; --dp-good-ground: #e3efe9; --dp-short: #9c3b12; --dp-short-ground: #fbe9df; --dp-focus: #1d5fb8;
-  box-sizing: border-box; min-height: 100%; padding: 12px; overflow-wrap: anywhere;
+  position: relative; box-sizing: border-box; min-height: 100%; padding: 12px; overflow-wrap: anywhere;
   background: var(--dp-ground); color: var(--dp-ink); color-scheme: light dark;
   font: 14px/1.45 system-ui, 'Segoe UI', 'Noto Sans', sans-serif;
 }

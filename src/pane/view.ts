@@ -68,7 +68,8 @@ function errorView(message: string): TemplateResult {
   return html`<li class="dp-error" dir="auto">${message}</li>`;
 }
 
-function planView({ id, seats, priorities, proof, short }: CaseView, opened: Opened, actions: Actions): TemplateResult {
+function planView(view: CaseView, opened: Opened, actions: Actions): TemplateResult {
+  const { id, seats, priorities, proof, short, bottlenecks, remedies, fragile } = view;
   const { needed, covered } = seats!;
   const open = needed - covered;
   return html`
@@ -80,10 +81,10 @@ function planView({ id, seats, priorities, proof, short }: CaseView, opened: Ope
     <div class="dp-gauge" aria-hidden="true"><span style="width:${needed === 0 ? 100 : (100 * covered) / needed}%"></span></div>
     <p class="dp-soft">${proof}</p>
     ${priorities.length > 0 ? prioritiesView(priorities) : nothing}
-    ${short.length > 0
-      ? html`<h3>Short (${counted(short.length, 'duty', 'duties')})</h3>
-          ${list(`${id} short`, short, shortView, opened, actions)}`
-      : nothing}
+    ${section(`Short (${counted(short.length, 'duty', 'duties')})`, `${id} short`, short, shortView, opened, actions)}
+    ${section('Why', `${id} why`, bottlenecks, bottleneckView, opened, actions)}
+    ${section('The cheapest remedy', `${id} remedies`, remedies ?? [], lineView, opened, actions)}
+    ${section('Whom the plan cannot lose', `${id} fragile`, fragile ?? [], fragileView, opened, actions)}
   `;
 }
 
@@ -104,14 +105,49 @@ function prioritiesView(priorities: CaseView['priorities']): TemplateResult {
   `;
 }
 
-function shortView({ duty, seats, reason }: CaseView['short'][number]): TemplateResult {
+/** A titled list; nothing where it is empty. */
+function section<T>(
+  title: string,
+  key: string,
+  items: readonly T[],
+  item: (item: T) => TemplateResult,
+  opened: Opened,
+  actions: Actions,
+): TemplateResult | typeof nothing {
+  return items.length === 0 ? nothing : html`<h3>${title}</h3>${list(key, items, item, opened, actions)}`;
+}
+
+function shortView({ duty, seats }: CaseView['short'][number]): TemplateResult {
   return html`
     <li class="dp-item">
       <span class="dp-name dp-clip" dir="auto">${duty}</span>
       <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')} short</span>
+    </li>
+  `;
+}
+
+function bottleneckView({ number, seats, reason }: CaseView['bottlenecks'][number]): TemplateResult {
+  return html`
+    <li class="dp-item">
+      <span class="dp-name">Bottleneck ${number}</span>
+      <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')}</span>
       <p class="dp-soft dp-clip" dir="auto">${reason}</p>
     </li>
   `;
+}
+
+function fragileView({ person, seats, duties }: NonNullable<CaseView['fragile']>[number]): TemplateResult {
+  return html`
+    <li class="dp-item">
+      <span class="dp-name dp-clip" dir="auto">${person}</span>
+      <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')}</span>
+      <p class="dp-soft dp-clip" dir="auto">${duties}</p>
+    </li>
+  `;
+}
+
+function lineView(text: string): TemplateResult {
+  return html`<li class="dp-item dp-clip" dir="auto">${text}</li>`;
 }
 
 function findingsView(id: string, findings: readonly FindingGroup[], opened: Opened, actions: Actions): TemplateResult {

@@ -161,11 +161,13 @@ function freeName(name: string, taken: Set<string>): string {
   }
 }
 
-function plainCell(row: number, column: number, value: string | null, style: BookCell['style']): BookCell {
+/** A cell with a value, or only a look. */
+export function plainCell(row: number, column: number, value: string | null, style: BookCell['style']): BookCell {
   return { row, column, formula: null, value, style, format: null };
 }
 
-function formulaCell(row: number, column: number, id: string, given: readonly string[]): BookCell {
+/** A heading cell whose formula fills the table below it. */
+export function formulaCell(row: number, column: number, id: string, given: readonly string[]): BookCell {
   return { row, column, formula: formula(id, given), value: null, style: HEADING, format: null };
 }
 

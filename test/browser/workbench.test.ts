@@ -27,7 +27,7 @@ afterEach(async () => {
 
 describe('the workbench with the demo', () => {
   it('opens with the demo answered, in the sheet and in the pane', async () => {
-    expect(await desk.sheets()).toEqual(['Inputs', 'Results', 'Grid']);
+    expect(await desk.sheets()).toEqual(['Inputs', 'Results', 'Grid', 'Why', 'Proof']);
     expect(await desk.valueAt('Results!A3')).toBe('Seats needed');
     expect(await desk.valueAt('Results!B3')).toBe(52);
     expect(await desk.valueAt('Results!B5')).toBe(3);
@@ -44,6 +44,15 @@ describe('the workbench with the demo', () => {
     expect(foreign).toEqual([]);
     expect(errors).toEqual([]);
     await page.close();
+  });
+
+  it('never scrolls as a page: the pane and the sheet do', async () => {
+    await desk.type('Inputs!A3', 'Algebra paper');
+    const { scrolled, beyond } = await desk.page.evaluate(() => ({
+      scrolled: document.scrollingElement!.scrollTop + document.body.scrollTop,
+      beyond: document.documentElement.scrollHeight - window.innerHeight,
+    }));
+    expect({ scrolled, beyond: Math.max(0, beyond) }).toEqual({ scrolled: 0, beyond: 0 });
   });
 
   it('recomputes every result and the pane when a cell is typed in', async () => {
@@ -68,7 +77,7 @@ describe('the workbench with the demo', () => {
   it('forgets a case whose formulas are gone', async () => {
     await desk.page.evaluate(() => {
       const { model } = window.dutyproof!.workbook;
-      for (const name of ['Results', 'Grid']) model.dispatch('DELETE_SHEET', { sheetId: model.getters.getSheetIdByName(name)!, sheetName: name });
+      for (const name of ['Results', 'Grid', 'Why', 'Proof']) model.dispatch('DELETE_SHEET', { sheetId: model.getters.getSheetIdByName(name)!, sheetName: name });
     });
     await desk.pane.getByText('Nothing has been calculated yet').waitFor();
   });

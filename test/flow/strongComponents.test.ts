@@ -47,7 +47,7 @@ describe('strong components', () => {
     });
     fc.assert(
       fc.property(graph, ({ nodes, arcs }) => {
-        const network = buildNetwork(nodes, arcList(arcs as Arc[]));
+        const network = buildNetwork(nodes, arcList(arcs));
         const residual = zeroFlow(network);
         const component = strongComponents(network, residual);
         const reach = Array.from({ length: nodes }, (_, v) => reachable(network, residual, [v]));

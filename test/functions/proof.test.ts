@@ -12,7 +12,7 @@ import type { Range } from '../../src/sheet/range';
 import { engine } from '../helpers/engine';
 import { rangesOf, specs, type Spec } from '../helpers/spec';
 
-type Table = unknown[][];
+type Table = (string | number | boolean | null)[][];
 
 /** A workbook of plain values with the native formulas beside it; no function of ours is in it. */
 function faultsOf(tables: readonly Table[], proof: Table): number[] {
@@ -21,7 +21,7 @@ function faultsOf(tables: readonly Table[], proof: Table): number[] {
   let left = 0;
   const put = (rows: Table, names: Record<string, string>, length: number): void => {
     rows.forEach((row, r) => row.forEach((value, c) => {
-      if (value !== '' && value !== null) cells[`${columnLetters(left + c)}${r + 1}`] = typeof value === 'number' ? String(value) : `'${value}`;
+      if (value !== '' && value !== null) cells[`${columnLetters(left + c)}${r + 1}`] = typeof value === 'number' ? String(value) : `'${String(value)}`;
     }));
     for (const [name, heading] of Object.entries(names)) {
       const letters = columnLetters(left + rows[0].indexOf(heading));
@@ -56,7 +56,7 @@ function failing(tables: readonly Table[], proof: Table): string[] {
 /** Without the Order rule, and without Fixed rules, which may pass limits and are then found for good reason. */
 function plain(spec: Spec): Table[] {
   const ranges = rangesOf({ ...spec, rules: spec.rules.filter(({ rule }) => rule !== 'Fixed') });
-  return ranges.slice(0, 4).map((range) => range!.filter((row) => row[0] !== 'Order').map((row) => [...row]));
+  return ranges.slice(0, 4).map((range) => range!.filter((row) => row[0] !== 'Order').map((row) => [...row])) as Table[];
 }
 
 describe('the bounds of a proof', () => {
@@ -98,7 +98,7 @@ describe('the native formulas', () => {
     [['Rule', 'Duty', 'Person', 'Value'], ['Limit', 'Sun', '', 2], ['Barred', 'Tea', 'Ann', '']],
   ];
   const proof = proofOf(tables);
-  const at = (test: (row: unknown[]) => boolean): number => proof.findIndex(test);
+  const at = (test: (row: Table[number]) => boolean): number => proof.findIndex(test);
   const tamper = (change: (copy: Table) => void): string[] => {
     const copy = proof.map((row) => [...row]);
     change(copy);
