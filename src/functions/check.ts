@@ -62,16 +62,20 @@ function detailOf({ kind, found, allowed, label }: Wrong): string {
     case 'Not eligible':
       return 'The pairs do not list this person for this duty.';
     case 'Too many':
-      return `${found} hold it; it needs ${allowed}.`;
     case 'Uncovered':
-      return `${found} of ${allowed} seats are held.`;
+      return `${holders(found)}; it needs ${allowed}.`;
     case 'Over maximum':
       return `Holds ${found}; the maximum is ${allowed}.`;
     case 'Below minimum':
       return `Holds ${found}; the minimum is ${allowed}.`;
     case 'Over a limit':
-      return `Holds ${found} in "${label}"; at most ${allowed} ${allowed === 1 ? 'is' : 'are'} allowed.`;
+      return `Holds ${found} in "${label}"; ${allowed === 0 ? 'none is' : allowed === 1 ? 'at most 1 is' : `at most ${allowed} are`} allowed.`;
   }
+}
+
+function holders(count: number): string {
+  if (count === 0) return 'Nobody holds it';
+  return count === 1 ? '1 person holds it' : `${count} people hold it`;
 }
 
 /** How the plan's cover compares with the best: in all, and where urgent seats are given up for less urgent ones. */
@@ -85,14 +89,18 @@ function shortRows(solved: Solved, seats: readonly Seat[]): string[][] {
   const short = total(best) - total(mine);
   const rows: string[][] = [];
   if (short > 0) {
-    rows.push(['Short of the best', '', '', `The plan covers ${total(mine)} seats; ${total(best)} can be covered, ${short} more.`]);
+    rows.push(['Short of the best', '', '', `The plan covers ${seatsIn(total(mine))}; ${total(best)} can be covered, ${short} more.`]);
   }
   const first = [...best.keys()].sort((a, b) => a - b).find((priority) => mine.get(priority) !== best.get(priority));
   if (first !== undefined && mine.get(first)! < best.get(first)!) {
     const label = first === LAST_PRIORITY ? 'Duties without priority' : `Priority ${first}`;
-    rows.push(['Short of the best', '', '', `${label}: ${mine.get(first)} seats are covered; ${best.get(first)} can be, more urgent ones kept.`]);
+    rows.push(['Short of the best', '', '', `${label}: the plan covers ${seatsIn(mine.get(first)!)}; ${best.get(first)} can be covered without giving up a more urgent one.`]);
   }
   return rows;
+}
+
+function seatsIn(count: number): string {
+  return `${count} ${count === 1 ? 'seat' : 'seats'}`;
 }
 
 function coverByPriority({ duties }: Case, held: Int32Array): Map<number, number> {

@@ -55,6 +55,6 @@ function note({ minimum, maximum, listed }: Person, assigned: number, mayTake: n
 /** Since the shortfall of minimums is the least possible, one of these holds for everyone below theirs. */
 function whyBelow(minimum: number, maximum: number, mayTake: number): string {
   if (maximum < minimum) return `the maximum is ${maximum}.`;
-  if (mayTake < minimum) return `only ${mayTake} ${mayTake === 1 ? 'duty is' : 'duties are'} open to them.`;
+  if (mayTake < minimum) return `${mayTake === 0 ? 'no duty is' : mayTake === 1 ? 'only 1 duty is' : `only ${mayTake} duties are`} open to them.`;
   return 'no duty can pass to them from anyone who is above their own minimum, and none is left uncovered that they could take.';
 }

@@ -8,22 +8,29 @@ const NAMED = 5;
 /** Why a duty is short, in a sentence or two. */
 export function shortageReason(kase: Case, shortage: Shortage): string {
   const { listed, barred, away, eligible, open, knot } = shortage;
-  if (open > 0) return knot.duties.length === 1 ? knotReason(kase, knot) : `Part of bottleneck ${knot.number}: ${knotReason(kase, knot)}`;
+  if (open > 0) return knot.duties.length === 1 ? knotReason(kase, knot) : `Part of bottleneck ${knot.number}: ${lowerFirst(knotReason(kase, knot))}`;
   if (listed === 0 && eligible === 0) return 'Nobody is listed as able to take it.';
   if (eligible === 0 && away === 0) return `${everybody(listed)} barred from it.`;
   if (eligible === 0 && barred === 0) return `${everybody(listed)} away at that time.`;
-  if (eligible === 0) return `Of the ${listed} people listed for it, ${barred} are barred and ${away} away.`;
+  if (eligible === 0) return `Of the ${listed} people listed for it, ${areOf(barred)} barred and ${areOf(away)} away.`;
   return 'Everyone who may take it holds it already, or has no room left beside their Fixed duties.';
 }
 
 /** Why the duties of a knot cannot all be covered: Hall's condition in numbers and names. */
 export function knotReason(kase: Case, { duties, people, needed, places }: Knot): string {
-  const seats = count(needed, 'seat', 'seats');
   if (people.length === 0) return `Nobody may take ${duties.length === 1 ? 'this duty' : 'these duties'}.`;
   const what = duties.length === 1 ? 'this duty' : `these ${duties.length} duties (${names(kase.duties, duties)})`;
-  const who = people.length > NAMED ? `${people.length} people` : names(kase.people, people);
-  const only = people.length === 1 ? 'may take' : 'alone may take';
-  return `${who} ${only} ${what} and can hold at most ${places} of the ${seats} needed.`;
+  const who = people.length > NAMED ? `${people.length} people` : listInWords(people.map((p) => kase.people[p].name));
+  const they = people.length === 1 ? 'has' : 'they have';
+  const seats = needed === 1 ? 'the 1 seat' : `the ${needed} seats`;
+  const room = places === 0 ? `no room for ${needed === 1 ? 'it' : `any of ${seats}`}` : `room for at most ${places} of ${seats} needed`;
+  return `Only ${who} can take ${what}, and ${they} ${room}.`;
+}
+
+/** `Ann, Bo and Cy`; with semicolons where a name holds a comma itself. */
+function listInWords(list: readonly string[]): string {
+  const comma = list.some((name) => name.includes(',')) ? ';' : ',';
+  return list.length === 1 ? list[0] : `${list.slice(0, -1).join(`${comma} `)} and ${list.at(-1)!}`;
 }
 
 function names(list: readonly { readonly name: string }[], numbers: readonly number[]): string {
@@ -31,9 +38,15 @@ function names(list: readonly { readonly name: string }[], numbers: readonly num
 }
 
 function everybody(listed: number): string {
-  return listed === 1 ? 'The only person listed for it is' : `All ${listed} people listed for it are`;
+  if (listed === 1) return 'The only person listed for it is';
+  return listed === 2 ? 'Both people listed for it are' : `All ${listed} people listed for it are`;
 }
 
-function count(number: number, one: string, many: string): string {
-  return `${number} ${number === 1 ? one : many}`;
+/** `1 is`, `2 are`. */
+function areOf(number: number): string {
+  return `${number} ${number === 1 ? 'is' : 'are'}`;
+}
+
+function lowerFirst(sentence: string): string {
+  return sentence.charAt(0).toLowerCase() + sentence.slice(1);
 }

@@ -1,4 +1,5 @@
 import type { CellFunction } from './declaration';
+import { PROOF_CHECKS, PROOF_NAMES } from './proofChecks';
 import { NAMESPACE } from './registry';
 
 /** The call of a function as documentation writes it: optional parameters in brackets. */
@@ -34,7 +35,31 @@ export function referenceMarkdown(functions: readonly CellFunction[]): string {
   return `${[head, ...sections].join('\n\n')}\n`;
 }
 
-/** The same as a page, for the help links of the add-in. */
+const PROOF_HEAD = `# Checking a plan without Dutyproof
+
+Written from the formulas themselves by \`npm run reference\`.
+
+\`DUTY.PROOF\` spills a table: the plan seat by seat with every count it must keep, then bounds that together allow no more seats than the plan covers. The formulas below check both parts against the input tables. They use nothing but COUNTIFS, SUMIFS, SUMPRODUCT, ABS and SUM, so they work in any spreadsheet program, on a copy with plain values too. Each counts faults: all of them 0 means that the plan keeps every limit and that no plan covers more.
+
+Why the bounds are a proof: every pair of a duty and a person falls under a bound (its duty's need, a person's maximum, a slot or group of that person, or the pair itself) or is closed by a rule, so no plan can hold more seats than the bounds allow together. Their sum is the number of seats covered.
+
+Two things are for a reader to look at. Closed pairs (\`no room\`) and bounds below a maximum rest on Fixed seats, which the formulas count. And the formulas compare names as the spreadsheet does, without regard to capitals but with every blank: type a name in one spelling.
+
+The demo workbook has them on its sheet Proof. To use them elsewhere, give these names to the columns, without their headings:
+
+| name | column |
+| --- | --- |`;
+
+/** The native formulas that check a proof, as Markdown. */
+export function proofMarkdown(): string {
+  const names = Object.entries(PROOF_NAMES).flatMap(([table, columns]) =>
+    Object.entries(columns).map(([name, heading]) => `| ${name} | ${heading} of ${table === 'proof' ? 'what DUTY.PROOF spilled' : `the ${table} table`} |`),
+  );
+  const checks = PROOF_CHECKS.map(({ fault, formula }) => `${fault}:\n\n\`\`\`\n${formula}\n\`\`\``);
+  return `${PROOF_HEAD}\n${names.join('\n')}\n\n## The formulas\n\n${checks.join('\n\n')}\n`;
+}
+
+/** The reference as a page, for the help links of the add-in. */
 export function referencePage(functions: readonly CellFunction[]): string {
   const table = (head: string, rows: readonly { name: string; description: string }[]): string =>
     `<table><thead><tr><th>${head}</th><th>meaning</th></tr></thead><tbody>${rows

@@ -48,12 +48,12 @@ describe('CHECK', () => {
     ]],
     ['someone away', [['Mon desk', 'Bo'], ['Mon stacks', 'Cy'], ['Tue desk', 'Bo'], ['Tue desk', 'Ada']], [
       'Not eligible | Tue desk | Ada | The pairs do not list this person for this duty.',
-      'Too many | Tue desk | 2 hold it; it needs 1.',
+      'Too many | Tue desk | 2 people hold it; it needs 1.',
     ]],
     ['uncovered seats, and how many more there could be', [['Mon stacks', 'Cy'], ['Tue desk', 'Bo']], [
-      'Uncovered | Mon desk | 0 of 1 seats are held.',
+      'Uncovered | Mon desk | Nobody holds it; it needs 1.',
       'Short of the best | The plan covers 2 seats; 3 can be covered, 1 more.',
-      'Short of the best | Priority 1: 0 seats are covered; 1 can be, more urgent ones kept.',
+      'Short of the best | Priority 1: the plan covers 0 seats; 1 can be covered without giving up a more urgent one.',
     ]],
     ['names that are not listed, and rows given twice', [['Mon desk', 'Bo'], ['Mon desk', 'bo'], ['Mon stacks', 'Cyy'], ['Thu desk', 'Ada'], ['Tue desk', 'Bo']], [
       'Row given twice | Row 2 of the plan: Mon desk with Bo stands in row 1 already.',
@@ -69,7 +69,7 @@ describe('CHECK', () => {
 
   it('takes the uncovered rows of ASSIGN for what they are', () => {
     const plan: Range = [['Duty', 'Person', 'Rank', 'Note'], ['Mon desk', '', '', 'Uncovered'], ['Mon stacks', 'Cy', 1, ''], ['Tue desk', 'Bo', 1, '']];
-    expect(findings(plan)[0]).toBe('Uncovered | Mon desk | 0 of 1 seats are held.');
+    expect(findings(plan)[0]).toBe('Uncovered | Mon desk | Nobody holds it; it needs 1.');
   });
 });
 
@@ -116,7 +116,7 @@ describe('LOADS', () => {
     const people: Range = [['Person', 'Maximum', 'Minimum'], ['Ada', 1, 2], ['Bo', 2, 2], ['Cy', 2, 2], ['Di', 1, 1]];
     const notes = spill('LOADS', PAIRS, people, DUTIES).map((row) => row[7]);
     expect(notes[1]).toBe('Below the minimum by 1: the maximum is 1.');
-    expect(notes[4]).toBe('Below the minimum by 1: only 0 duties are open to them.');
+    expect(notes[4]).toBe('Below the minimum by 1: no duty is open to them.');
     expect(notes.slice(2, 4).filter((note) => String(note).includes('no duty can pass to them')).length).toBeGreaterThan(0);
   });
 });

@@ -36,7 +36,7 @@ function rows(id: string, ...ranges: (Range | null)[]): unknown[][] {
 describe('the explanations of a small clinic', () => {
   it('BOTTLENECKS are the duties that hang on too few people', () => {
     expect(rows('BOTTLENECKS', PAIRS, PEOPLE, DUTIES, RULES)).toEqual([
-      [1, 'Evening surgery; Late surgery', 'Noor', 2, 1, 1, 'Noor may take these 2 duties (Evening surgery; Late surgery) and can hold at most 1 of the 2 seats needed.'],
+      [1, 'Evening surgery; Late surgery', 'Noor', 2, 1, 1, 'Only Noor can take these 2 duties (Evening surgery; Late surgery), and has room for at most 1 of the 2 seats needed.'],
       [2, 'Night call', '', 1, 0, 1, 'Nobody may take this duty.'],
       [3, 'Theatre', '', 1, 0, 1, 'Nobody may take this duty.'],
     ]);
@@ -88,7 +88,7 @@ describe('sentences about bottlenecks', () => {
     const pairs = many.flatMap((duty) => ['Ann', 'Bob'].map((person) => [duty, person]));
     const [row] = rows('BOTTLENECKS', pairs, [[3]]);
     expect(row[6]).toBe(
-      'Ann; Bob alone may take these 20 duties (Duty 0; Duty 1; Duty 2; Duty 3; Duty 4; … and 15 more) and can hold at most 6 of the 20 seats needed.',
+      'Only Ann and Bob can take these 20 duties (Duty 0; Duty 1; Duty 2; Duty 3; Duty 4; … and 15 more), and they have room for at most 6 of the 20 seats needed.',
     );
   });
 

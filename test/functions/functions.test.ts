@@ -58,7 +58,7 @@ describe('the functions on a small museum', () => {
         1,
         1,
         1,
-        'Part of bottleneck 1: Bo; Ada alone may take these 2 duties (Sculpture; Old masters) and can hold at most 2 of the 3 seats needed.',
+        'Part of bottleneck 1: only Bo and Ada can take these 2 duties (Sculpture; Old masters), and they have room for at most 2 of the 3 seats needed.',
       ],
     ]);
   });
