@@ -92,4 +92,25 @@ const workbench = {
   ],
 };
 
-export default [excel, workbench];
+/** The worker for cases that are no flow, with the solver beside it: nothing of it is loaded before such a case appears. */
+const search = {
+  ...common,
+  name: 'search',
+  target: ['webworker', 'es2022'],
+  entry: { search: './src/entries/search.ts' },
+  output: { path: join(ROOT, 'dist'), filename: '[name].js' },
+  plugins: [
+    new CopyPlugin({
+      patterns: [
+        ...['highs.js', 'highs.wasm'].map((file) => ({
+          from: join(ROOT, 'node_modules/highs/build', file),
+          to: 'vendor/[name][ext]',
+          info: { minimized: true },
+        })),
+        { from: join(ROOT, 'node_modules/highs/LICENSE'), to: 'vendor/highs-LICENSE.txt', toType: 'file' },
+      ],
+    }),
+  ],
+};
+
+export default [excel, workbench, search];

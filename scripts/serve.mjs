@@ -31,6 +31,8 @@ const POLICIES = {
   '/pane.html':
     `default-src 'self' ${OFFICE}; script-src 'self' ${OFFICE}; style-src 'self' 'unsafe-inline'; ` +
     `img-src 'self' data:; ${NEVER}`,
+  // The solver is WebAssembly; only its worker may compile it.
+  '/search.js': `default-src 'self'; script-src 'self' 'wasm-unsafe-eval'; ${NEVER}`,
 };
 const STRICT = `default-src 'self'; style-src 'self' 'unsafe-inline'; frame-ancestors 'none'; ${NEVER}`;
 

@@ -1,5 +1,5 @@
 import type { Case } from './case';
-import type { Plan } from './plan';
+import { planOf, type Plan } from './plan';
 import type { Reduction } from './reduce';
 import { augment, createWorkspace } from '../flow/maximumFlow';
 import { push, zeroFlow } from '../flow/network';
@@ -26,35 +26,6 @@ export function coverBest({ network, source, sink, classes }: Reduction): Int32A
 
 /** Reads who holds which seat off a flow. */
 export function readPlan(kase: Case, reduction: Reduction, residual: Int32Array): Plan {
-  const { network, firstPairArc, openPair, open } = reduction;
-  const { pairs } = kase;
-  const seats = kase.fixed.map(({ duty, person }) => ({ duty, person, fixed: true }));
-  openPair.forEach((i, k) => {
-    if (residual[network.position[firstPairArc + k]] > 0) return;
-    seats.push({ duty: pairs.duty[i], person: pairs.person[i], fixed: false });
-  });
-  const dutyPlace = placeIn(kase.dutyOrder);
-  const personPlace = placeIn(kase.personOrder);
-  seats.sort((a, b) => dutyPlace[a.duty] - dutyPlace[b.duty] || personPlace[a.person] - personPlace[b.person]);
-
-  const heldOfDuty = open.fixedOfDuty.slice();
-  const heldByPerson = open.fixedByPerson.slice();
-  for (const { duty, person, fixed } of seats) {
-    if (fixed) continue;
-    heldOfDuty[duty]++;
-    heldByPerson[person]++;
-  }
-  let needed = 0;
-  let covered = 0;
-  kase.duties.forEach(({ need }, d) => {
-    needed += need;
-    covered += Math.min(need, heldOfDuty[d]);
-  });
-  return { seats, heldOfDuty, heldByPerson, needed, covered };
-}
-
-function placeIn(order: Int32Array): Int32Array {
-  const place = new Int32Array(order.length);
-  order.forEach((number, i) => (place[number] = i));
-  return place;
+  const { network, firstPairArc, openPair } = reduction;
+  return planOf(kase, [...openPair].filter((_, k) => residual[network.position[firstPairArc + k]] === 0));
 }

@@ -1,4 +1,5 @@
 import type { Case } from './case';
+import { conflictSets } from './conflicts';
 
 /**
  * Limits of a person as sets of duties: "at most one duty in this slot", "at most two of this group".
@@ -8,7 +9,9 @@ import type { Case } from './case';
 
 /** The kinds of set a case limits, each with the duties in it. */
 export interface LimitSet {
-  /** The slot or group as shown. */
+  /** A slot or group with this name, or duties that one person cannot hold together for another reason. */
+  readonly kind: 'label' | 'conflict';
+  /** The slot or group as shown, or what the conflict is. */
   readonly name: string;
   /** The most duties of the set anyone may hold: whole, >= 0; Infinity where only some people are limited. */
   readonly everyone: number;
@@ -24,8 +27,8 @@ export function mostOf(set: LimitSet, person: number): number {
 }
 
 /**
- * Every set a person can be limited by: each slot, at most one duty; and each slot or group that a
- * Limit row names. In the order of their keys, slots first.
+ * Every set a person can be limited by: each slot, at most one duty; each slot or group that a Limit
+ * row names; and duties too close in time or in a Clash. In the order of their keys, slots first.
  */
 export function limitSets(kase: Case): readonly LimitSet[] {
   const slots = new Map<string, number[]>();
@@ -36,7 +39,7 @@ export function limitSets(kase: Case): readonly LimitSet[] {
   });
   const sets: LimitSet[] = [];
   for (const key of [...slots.keys()].sort()) {
-    sets.push({ name: kase.labelNames.get(key) ?? key, everyone: 1, single: new Map(), duties: slots.get(key)! });
+    sets.push({ kind: 'label', name: kase.labelNames.get(key) ?? key, everyone: 1, single: new Map(), duties: slots.get(key)! });
   }
   const limited = new Map<string, { name: string; everyone: number; single: Map<number, number> }>();
   for (const { label, person, most } of kase.limits) {
@@ -47,9 +50,9 @@ export function limitSets(kase: Case): readonly LimitSet[] {
   }
   for (const key of [...limited.keys()].sort()) {
     const duties = labels.get(key);
-    if (duties !== undefined) sets.push({ ...limited.get(key)!, duties });
+    if (duties !== undefined) sets.push({ kind: 'label', ...limited.get(key)!, duties });
   }
-  return sets;
+  return [...sets, ...conflictSets(kase)];
 }
 
 function append(map: Map<string, number[]>, key: string, duty: number): void {

@@ -29,6 +29,8 @@ export interface OpenPairs {
   readonly fixedOfDuty: Int32Array;
   /** Fixed seats of each person, by person number. */
   readonly fixedByPerson: Int32Array;
+  /** Load of the Fixed seats of each person, by person number. */
+  readonly fixedLoad: Int32Array;
 }
 
 /** Sorts every pair of the case by what the rules say of it. */
@@ -37,15 +39,17 @@ export function openPairs(kase: Case): OpenPairs {
   const setsOf = setsOfDuty(sets, kase.duties.length);
   const fixedOfDuty = new Int32Array(kase.duties.length);
   const fixedByPerson = new Int32Array(kase.people.length);
+  const fixedLoad = new Int32Array(kase.people.length);
   const fixedInSet = new Map<number, Map<number, number>>();
   for (const { duty, person } of kase.fixed) {
     fixedOfDuty[duty]++;
     fixedByPerson[person]++;
+    fixedLoad[person] += kase.duties[duty].load;
     const inSet = fixedInSet.get(person) ?? new Map<number, number>();
     fixedInSet.set(person, inSet);
     for (const s of setsOf[duty]) inSet.set(s, (inSet.get(s) ?? 0) + 1);
   }
-  const partial = { sets, setsOf, fixedInSet, fixedOfDuty, fixedByPerson };
+  const partial = { sets, setsOf, fixedInSet, fixedOfDuty, fixedByPerson, fixedLoad };
   return { ...partial, state: pairStates(kase, partial) };
 }
 

@@ -49,18 +49,28 @@ export interface PriorityClass {
   readonly arc: number;
 }
 
-/** Limits that are not nested, so that the case is not a flow. */
-export interface NotNested {
-  readonly person: number;
-  readonly crossing: Crossing;
+/** Why a case is not a flow. */
+export interface NotFlow {
+  /** The first person (by name) whose limits cross; null where Together rules or loads are the reason. */
+  readonly person: number | null;
+  /** Two of their limits that cross. */
+  readonly crossing: Crossing | null;
 }
 
-/** @returns the network, or the first person (by name) whose limits cross */
-export function reduce(kase: Case): Reduction | NotNested {
+/** @returns the network, or why there is none */
+export function reduce(kase: Case): Reduction | NotFlow {
+  if (kase.together.length > 0 || usesLoads(kase)) return { person: null, crossing: null };
   const open = openPairs(kase);
   const openPair = Int32Array.from(openIndices(open.state));
   const nestings = nestAll(kase, open, openPair);
   return 'crossing' in nestings ? nestings : layOut(kase, open, openPair, nestings);
+}
+
+/** True where a duty that someone may hold counts other than 1. */
+function usesLoads({ duties, pairs, fixed }: Case): boolean {
+  if (duties.every(({ load }) => load === 1)) return false;
+  const counts = (d: number): boolean => duties[d].load !== 1 && duties[d].need > 0;
+  return pairs.duty.some(counts) || fixed.some(({ duty }) => duties[duty].load !== 1);
 }
 
 function* openIndices(state: Uint8Array): Generator<number> {
@@ -86,7 +96,7 @@ export interface Nestings {
   readonly innermost: Int32Array;
 }
 
-function nestAll(kase: Case, open: OpenPairs, openPair: Int32Array): Nestings | NotNested {
+function nestAll(kase: Case, open: OpenPairs, openPair: Int32Array): Nestings | NotFlow {
   const { first, place } = groupByPerson(kase, openPair);
   const innermost = new Int32Array(openPair.length).fill(-1);
   const ofPerson: Nesting[] = new Array<Nesting>(kase.people.length);

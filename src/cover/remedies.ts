@@ -3,7 +3,7 @@ import { NetworkSimplex } from '../flow/networkSimplex';
 import type { Case, Pairs } from './case';
 import { coverBest } from './coverBest';
 import { keyHash, lot } from './lots';
-import { reduce, type NotNested, type Reduction } from './reduce';
+import { reduce, type NotFlow, type Reduction } from './reduce';
 import { makeTally, type Tally } from './tally';
 
 /** A change that helps. `duty` null: one more place for the person; otherwise the person is made eligible for it. */
@@ -34,7 +34,7 @@ export interface Remedies {
  *
  * @returns null where there are too many pairs to look at
  */
-export function remedies(kase: Case): Remedies | NotNested | null {
+export function remedies(kase: Case): Remedies | NotFlow | null {
   const { place, eligibility } = kase.prices;
   const listed = kase.people.filter((person) => person.listed).length;
   if (eligibility !== null && kase.duties.length * listed > MOST_PAIRS) return null;
@@ -66,7 +66,8 @@ interface Wide {
   readonly isNew: Uint8Array;
 }
 
-function widen(kase: Case): Wide {
+/** The case with every change made that is allowed. */
+export function widen(kase: Case): Wide {
   const { place, eligibility } = kase.prices;
   const people = kase.people.map((person) => {
     const stretch = place === null || !person.listed ? 0 : person.stretch;
@@ -140,7 +141,7 @@ function priceArcs(kase: Case, wide: Wide, reduction: Reduction, tally: Tally, p
 }
 
 /** By person in name order, places first, then duties in name order. */
-function sortChanges({ personOrder, dutyOrder }: Case, changes: readonly Remedy[]): Remedy[] {
+export function sortChanges({ personOrder, dutyOrder }: Case, changes: readonly Remedy[]): Remedy[] {
   const personPlace = new Map([...personOrder].map((p, i) => [p, i]));
   const dutyPlace = new Map<number | null, number>([[null, -1], ...[...dutyOrder].map((d, i) => [d, i] as const)]);
   return [...changes].sort(

@@ -1,7 +1,6 @@
 import type { Case } from './case';
-import { PairState } from './openPairs';
+import { PairState, type OpenPairs } from './openPairs';
 import type { Plan } from './plan';
-import type { Reduction } from './reduce';
 import type { Solution } from './solve';
 import { components } from '../flow/components';
 import { reachable } from '../flow/residual';
@@ -19,8 +18,8 @@ export interface Shortage {
   readonly away: number;
   /** People who may take it beside their Fixed duties, if only they had a place left. */
   readonly open: number;
-  /** The knot it is part of. */
-  readonly knot: Knot;
+  /** The knot it is part of; null where a search found none that it is part of. */
+  readonly knot: Knot | null;
 }
 
 /**
@@ -34,22 +33,27 @@ export interface Knot {
   readonly duties: readonly number[];
   readonly people: readonly number[];
   readonly needed: number;
-  /** Seats of these duties that are held: no plan holds more. */
+  /** Seats of these duties that are held: no plan that covers the most urgent first holds more. */
   readonly places: number;
+  /** True where it is known that no duty of it can be spared; a search may not have had the time to try. */
+  readonly isSmallest: boolean;
 }
 
-/** The short duties in table order. */
-export function shortages(kase: Case, { reduction, residual, plan }: Solution): readonly Shortage[] {
+/**
+ * The short duties in table order.
+ *
+ * @param found the knots of the case
+ */
+export function shortages(kase: Case, open: OpenPairs, plan: Plan, found: readonly Knot[]): readonly Shortage[] {
   const short = kase.duties.flatMap(({ need }, duty) => (plan.heldOfDuty[duty] < need ? [duty] : []));
   if (short.length === 0) return [];
-  const counts = countPairs(kase, reduction, new Set(short));
-  const knotOf = findKnots(kase, reduction, residual, plan);
+  const counts = countPairs(kase, open, new Set(short));
+  const knotOf = new Map(found.flatMap((knot) => knot.duties.map((duty) => [duty, knot] as const)));
   return short.map((duty) => {
-    const { listed, barred, away, open, fixed } = counts.get(duty)!;
+    const { listed, barred, away, open: openCount, fixed } = counts.get(duty)!;
     const eligible = fixed + listed - barred - away;
-    // A short duty is reached from the source, so it is in a knot, if only by itself.
-    const knot = knotOf.get(duty)!;
-    return { duty, short: kase.duties[duty].need - plan.heldOfDuty[duty], eligible, listed, barred, away, open, knot };
+    const missing = kase.duties[duty].need - plan.heldOfDuty[duty];
+    return { duty, short: missing, eligible, listed, barred, away, open: openCount, knot: knotOf.get(duty) ?? null };
   });
 }
 
@@ -62,7 +66,7 @@ interface PairCounts {
   fixed: number;
 }
 
-function countPairs(kase: Case, { open }: Reduction, duties: ReadonlySet<number>): Map<number, PairCounts> {
+function countPairs(kase: Case, open: OpenPairs, duties: ReadonlySet<number>): Map<number, PairCounts> {
   const counts = new Map<number, PairCounts>();
   for (const duty of duties) {
     counts.set(duty, { listed: 0, barred: 0, away: 0, open: 0, fixed: open.fixedOfDuty[duty] });
@@ -85,15 +89,11 @@ interface KnotDraft {
   readonly people: number[];
   needed: number;
   places: number;
+  readonly isSmallest: boolean;
 }
 
-/** The knot of each duty that is in one, by duty number. */
-function findKnots(
-  kase: Case,
-  reduction: Reduction,
-  residual: Int32Array,
-  plan: Plan,
-): ReadonlyMap<number, Knot> {
+/** The knots of a flow, in the order of their numbers. Every short duty is in one, if only by itself. */
+export function knots(kase: Case, { reduction, residual, plan }: Solution): readonly Knot[] {
   const { network, source, classes, dutyNode, openPair } = reduction;
   const member = reachable(network, residual, [source]);
   member[source] = 0;
@@ -105,7 +105,7 @@ function findKnots(
   kase.duties.forEach(({ need }, duty) => {
     const number = part[dutyNode[duty]];
     if (number === -1) return;
-    const knot = drafts.get(number) ?? { number: drafts.size + 1, duties: [], people: [], needed: 0, places: 0 };
+    const knot = drafts.get(number) ?? { number: drafts.size + 1, duties: [], people: [], needed: 0, places: 0, isSmallest: true };
     drafts.set(number, knot);
     knotOf.set(duty, knot);
     knot.duties.push(duty);
@@ -123,5 +123,5 @@ function findKnots(
     if (knot !== undefined) people.get(knot)!.add(person);
   }
   for (const [knot, numbers] of people) knot.people.push(...[...numbers].sort((a, b) => a - b));
-  return knotOf;
+  return [...drafts.values()];
 }

@@ -3,7 +3,7 @@ import { coverBest, readPlan } from './coverBest';
 import { improve } from './improve';
 import type { Plan } from './plan';
 import { coverFaults } from './proof';
-import { reduce, type NotNested, type Reduction } from './reduce';
+import { reduce, type NotFlow, type Reduction } from './reduce';
 
 /** A best plan with the flow it was read from. */
 export interface Solution {
@@ -16,7 +16,7 @@ export interface Solution {
 }
 
 /** @returns the best plan, or why the case is not a flow */
-export function solve(kase: Case): Solution | NotNested {
+export function solve(kase: Case): Solution | NotFlow {
   const reduction = reduce(kase);
   if ('crossing' in reduction) return reduction;
   const residual = coverBest(reduction);

@@ -68,22 +68,25 @@ class Holdings {
   }
 
   take({ duty, person }: Seat): void {
-    for (const limit of this.#limits(duty)) this.#add(limit, person, 1);
+    for (const limit of this.#limits(duty)) this.#add(limit, person, this.#weight(limit, duty));
   }
 
   give({ duty, person }: Seat): void {
-    for (const limit of this.#limits(duty)) this.#add(limit, person, -1);
+    for (const limit of this.#limits(duty)) this.#add(limit, person, -this.#weight(limit, duty));
   }
 
   /** True where taking the duty keeps every limit of the person it falls under. */
   hasRoom({ duty, person }: Seat): boolean {
-    return this.#limits(duty).every((limit) => this.#count(limit, person) < this.#most(limit, person));
+    return this.#limits(duty).every((limit) => {
+      const weight = this.#weight(limit, duty);
+      return weight === 0 || this.#count(limit, person) + weight <= this.#most(limit, person);
+    });
   }
 
   /** The limits of a person that would be passed if all these duties were taken before any is given. */
   tight(person: number, taken: readonly number[]): Set<number> {
     const more = new Map<number, number>();
-    for (const duty of taken) for (const limit of this.#limits(duty)) more.set(limit, (more.get(limit) ?? 0) + 1);
+    for (const duty of taken) for (const limit of this.#limits(duty)) more.set(limit, (more.get(limit) ?? 0) + this.#weight(limit, duty));
     return new Set(
       [...more].filter(([limit, count]) => this.#count(limit, person) + count > this.#most(limit, person)).map(([limit]) => limit),
     );
@@ -96,6 +99,11 @@ class Holdings {
   /** The sets a duty is in, and -1 for all duties. */
   #limits(duty: number): number[] {
     return [-1, ...this.#open.setsOf[duty]];
+  }
+
+  /** What the duty counts against a limit: its load against the maximum, one against all others. */
+  #weight(limit: number, duty: number): number {
+    return limit === -1 ? this.#kase.duties[duty].load : 1;
   }
 
   #most(limit: number, person: number): number {
@@ -111,7 +119,7 @@ class Holdings {
   }
 }
 
-/** Moves that touch the same tight limit of a person belong to one chain. */
+/** Moves that touch the same tight limit of a person, or duties that go together, belong to one chain. */
 function linkMoves(kase: Case, open: OpenPairs, moves: readonly Move[]): Move[][] {
   const state = new Holdings(kase, open);
   for (const seat of kase.current ?? []) state.take(seat);
@@ -128,6 +136,10 @@ function linkMoves(kase: Case, open: OpenPairs, moves: readonly Move[]): Move[][
     const tight = state.tight(person, own.filter((i) => moves[i].to === person).map((i) => moves[i].duty));
     const tied = own.filter((i) => state.isUnder(moves[i].duty, tight));
     for (const i of tied) link[Math.max(find(i), find(tied[0]))] = Math.min(find(i), find(tied[0]));
+  }
+  for (const [one, other] of kase.together) {
+    const pair = moves.flatMap(({ duty }, i) => (duty === one || duty === other ? [i] : []));
+    for (const i of pair) link[Math.max(find(i), find(pair[0]))] = Math.min(find(i), find(pair[0]));
   }
   const chains = new Map<number, Move[]>();
   moves.forEach((move, i) => {

@@ -1,5 +1,7 @@
 import { Journal } from '../functions/journal';
 import { FUNCTIONS } from '../functions/registry';
+import { provideSearcher } from '../functions/searches';
+import { WorkerSearcher } from '../host/workerSearcher';
 import { registerInExcel } from '../host/excel/register';
 import { ExcelWorkbook } from '../host/excel/workbook';
 import { mountPane } from '../pane/mount';
@@ -12,6 +14,7 @@ const WAITING =
   'Excel has not answered yet. If this stays, check the network connection, then close this pane and open it again.';
 
 const journal = new Journal();
+provideSearcher(new WorkerSearcher('search.js'));
 registerInExcel(FUNCTIONS, journal);
 void start();
 

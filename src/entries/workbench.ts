@@ -1,5 +1,7 @@
 import { Journal } from '../functions/journal';
 import { FUNCTIONS } from '../functions/registry';
+import { provideSearcher } from '../functions/searches';
+import { WorkerSearcher } from '../host/workerSearcher';
 import type { Engine, EngineModel } from '../host/workbench/engine';
 import { registerInEngine } from '../host/workbench/register';
 import { WorkbenchWorkbook } from '../host/workbench/workbook';
@@ -30,7 +32,8 @@ async function start(): Promise<void> {
   // The engine tells the console about every step it takes.
   console.debug = () => undefined;
   const journal = new Journal();
-  registerInEngine(o_spreadsheet, FUNCTIONS, journal);
+  provideSearcher(new WorkerSearcher('search.js'));
+  registerInEngine(o_spreadsheet, FUNCTIONS, journal, () => workbook.recalculateSoon());
   leaveOutMenus(o_spreadsheet);
   const workbook = new WorkbenchWorkbook(new o_spreadsheet.Model({}));
   const notice = new Notice(element('notice'));

@@ -1,5 +1,6 @@
 import type { Spill } from '../sheet/range';
 import { joinNames, writeTable } from '../sheet/write';
+import { NOT_IN_TIME } from './reasons';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import type { Solved } from './solved';
 
@@ -22,13 +23,13 @@ export const ABSENCES: CaseFunction = {
 
 function spillAbsences(solved: Solved): Spill {
   const kase = solved.case;
+  const { plan } = solved.outcome;
   const duty = (d: number): string => kase.duties[d].name;
-  const rows = solved.absences.map(({ person, holds, lost, dutiesLost, takenOver }) => [
-    kase.people[person].name,
-    holds.length,
-    lost,
-    joinNames(dutiesLost.map(duty)),
-    joinNames(takenOver.map(({ duty: d, by }) => (by.length === 0 ? duty(d) : `${duty(d)} (${joinNames(by.map((p) => kase.people[p].name))})`))),
-  ]);
+  const rows = solved.absences.map((answer, p) => {
+    if (answer === null) return [kase.people[p].name, plan.heldByPerson[p], NOT_IN_TIME];
+    const { holds, lost, dutiesLost, takenOver } = answer;
+    const takers = takenOver.map(({ duty: d, by }) => (by.length === 0 ? duty(d) : `${duty(d)} (${joinNames(by.map((q) => kase.people[q].name))})`));
+    return [kase.people[p].name, holds.length, lost, joinNames(dutiesLost.map(duty)), joinNames(takers)];
+  });
   return writeTable(headings(COLUMNS), rows, 'No people');
 }

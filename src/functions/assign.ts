@@ -23,7 +23,7 @@ export const ASSIGN: CaseFunction = {
 
 function assign(solved: Solved): Spill {
   const kase = solved.case;
-  const { plan } = solved.solution;
+  const { plan } = solved.outcome;
   const rankOf = rankLookUp(kase);
   const note = noteLookUp(kase);
   const rows = seatsByDuty(kase, plan).flatMap((seats, d) => {

@@ -1,3 +1,4 @@
+import type { Knot } from '../cover/shortage';
 import type { Spill } from '../sheet/range';
 import { joinNames, writeTable } from '../sheet/write';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
@@ -25,7 +26,7 @@ export const BOTTLENECKS: CaseFunction = {
 
 function bottlenecks(solved: Solved): Spill {
   const kase = solved.case;
-  const knots = [...new Set(solved.shortages.map(({ knot }) => knot))].sort((a, b) => a.number - b.number);
+  const knots = knotsOf(solved);
   const rows = knots.map((knot) => [
     knot.number,
     joinNames(knot.duties.map((d) => kase.duties[d].name)),
@@ -36,4 +37,10 @@ function bottlenecks(solved: Solved): Spill {
     knotReason(kase, knot),
   ]);
   return writeTable(headings(COLUMNS), rows, 'No bottleneck: every seat is covered');
+}
+
+/** The bottlenecks of short duties, in the order of their numbers. */
+export function knotsOf(solved: Solved): Knot[] {
+  const knots = new Set(solved.shortages.flatMap(({ knot }) => (knot === null ? [] : [knot])));
+  return [...knots].sort((a, b) => a.number - b.number);
 }

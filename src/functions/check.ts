@@ -1,6 +1,7 @@
 import type { Case, Seat } from '../cover/case';
 import { LAST_PRIORITY } from '../cover/case';
 import { check, type Wrong } from '../cover/check';
+import type { Plan } from '../cover/plan';
 import type { Range, Spill } from '../sheet/range';
 import { writeTable } from '../sheet/write';
 import { CASE_PARAMETERS, headings, type RangeFunction } from './declaration';
@@ -27,13 +28,15 @@ export const CHECK: RangeFunction = {
 };
 
 function checkPlan([plan, ...ranges]: readonly (Range | null)[]): Spill {
+  // The plan is read as a current plan would be; what can be covered is asked without it, as other functions ask.
   const solved = recall([...ranges.slice(0, 4), plan ?? []]);
   const kase = solved.case;
+  const best = recall([...ranges.slice(0, 4), null]).outcome;
   const seats = kase.current ?? [];
   const rows = [
     ...readingRows(solved),
-    ...check(kase, solved.solution.reduction.open, seats).map((entry) => wrongRow(kase, entry)),
-    ...shortRows(solved, seats),
+    ...check(kase, best.open, seats).map((entry) => wrongRow(kase, entry)),
+    ...shortRows(kase, best.plan, seats),
   ];
   return writeTable(headings(COLUMNS), rows, 'Nothing is wrong: every rule is kept, and no plan covers more');
 }
@@ -70,6 +73,12 @@ function detailOf({ kind, found, allowed, label }: Wrong): string {
       return `Holds ${found}; the minimum is ${allowed}.`;
     case 'Over a limit':
       return `Holds ${found} in "${label}"; ${allowed === 0 ? 'none is' : allowed === 1 ? 'at most 1 is' : `at most ${allowed} are`} allowed.`;
+    case 'Too close in time':
+      return `Overlaps "${label}", or leaves less than the Rest between them.`;
+    case 'Clash':
+      return `A Clash rule says that nobody holds this and "${label}".`;
+    case 'Not together':
+      return `A Together rule says that whoever holds this holds "${label}" too.`;
   }
 }
 
@@ -79,12 +88,11 @@ function holders(count: number): string {
 }
 
 /** How the plan's cover compares with the best: in all, and where urgent seats are given up for less urgent ones. */
-function shortRows(solved: Solved, seats: readonly Seat[]): string[][] {
-  const kase = solved.case;
+function shortRows(kase: Case, plan: Plan, seats: readonly Seat[]): string[][] {
   const held = new Int32Array(kase.duties.length);
   for (const { duty } of seats) held[duty]++;
   const mine = coverByPriority(kase, held);
-  const best = coverByPriority(kase, solved.solution.plan.heldOfDuty);
+  const best = coverByPriority(kase, plan.heldOfDuty);
   const total = (cover: Map<number, number>): number => [...cover.values()].reduce((sum, count) => sum + count, 0);
   const short = total(best) - total(mine);
   const rows: string[][] = [];

@@ -1,6 +1,6 @@
-import { choices } from '../cover/choices';
 import type { Spill } from '../sheet/range';
 import { writeTable } from '../sheet/write';
+import { NOT_IN_TIME } from './reasons';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import type { Solved } from './solved';
 
@@ -21,8 +21,8 @@ export const CHOICES: CaseFunction = {
 
 function spillChoices(solved: Solved): Spill {
   const { pairs, duties, people } = solved.case;
-  const use = choices(solved.solution);
+  const use = solved.choices;
   const inTableOrder = Array.from(use.keys()).sort((i, j) => pairs.duty[i] - pairs.duty[j] || i - j);
-  const rows = inTableOrder.map((i) => [duties[pairs.duty[i]].name, people[pairs.person[i]].name, use[i]]);
+  const rows = inTableOrder.map((i) => [duties[pairs.duty[i]].name, people[pairs.person[i]].name, use[i] ?? NOT_IN_TIME]);
   return writeTable(headings(COLUMNS), rows, 'No pairs');
 }

@@ -23,7 +23,7 @@ export const GRID: CaseFunction = {
 
 function grid(solved: Solved): Spill {
   const kase = solved.case;
-  const { plan } = solved.solution;
+  const { plan } = solved.outcome;
   const width = kase.people.length + 2;
   if (width > SHEET_COLUMNS) {
     throw new Refusal(

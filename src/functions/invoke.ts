@@ -4,6 +4,7 @@ import type { CellFunction } from './declaration';
 import type { Answer, Journal } from './journal';
 import { recall } from './memory';
 import { Refusal } from './refusal';
+import { Busy, dropSearchesBut } from './searches';
 import type { Solved } from './solved';
 
 /**
@@ -20,6 +21,7 @@ export function invoke(
   journal: Journal,
 ): Answer {
   let solved: Solved | null = null;
+  let waitsFor: Solved | null = null;
   let answer: Answer;
   try {
     if ('ofCase' in fn) {
@@ -29,10 +31,21 @@ export function invoke(
       answer = { kind: 'spill', spill: fn.ofRanges(ranges) };
     }
   } catch (error) {
-    answer = { kind: 'fault', message: messageOf(error, fn) };
+    if (error instanceof Busy) {
+      waitsFor = error.solved;
+      answer = { kind: 'busy', settled: error.settled };
+    } else {
+      answer = { kind: 'fault', message: messageOf(error, fn) };
+    }
   }
-  journal.record({ address, functionId: fn.id, answer, solved });
+  journal.record({ address, functionId: fn.id, answer, solved, waitsFor });
+  dropUnasked(journal);
   return answer;
+}
+
+/** A case that no cell asks about any more is not searched any longer. */
+function dropUnasked(journal: Journal): void {
+  dropSearchesBut((one) => journal.calls().some(({ solved, waitsFor }) => solved === one || waitsFor === one));
 }
 
 function messageOf(error: unknown, fn: CellFunction): string {

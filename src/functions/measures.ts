@@ -3,8 +3,8 @@ import type { Plan } from '../cover/plan';
 import { rankLookUp } from './seats';
 
 /** By how many seats people stay below their minimums, in all. */
-export function minimumsMissed({ people }: Case, { heldByPerson }: Plan): number {
-  return people.reduce((missed, { minimum }, p) => missed + Math.max(0, minimum - heldByPerson[p]), 0);
+export function minimumsMissed({ people }: Case, { loadByPerson }: Plan): number {
+  return people.reduce((missed, { minimum }, p) => missed + Math.max(0, minimum - loadByPerson[p]), 0);
 }
 
 /** Seats of the current plan that the plan keeps. */

@@ -4,6 +4,9 @@ import { Solved } from './solved';
 /** Cases kept; a workbook that asks about more at once solves the oldest anew. */
 const KEPT = 8;
 
+/** The same for cases that were searched. */
+const KEPT_SEARCHED = 64;
+
 /** Remembered cases, most recently used first. */
 const remembered: { ranges: readonly (Range | null)[]; solved: Solved }[] = [];
 
@@ -17,8 +20,15 @@ export function recall(ranges: readonly (Range | null)[]): Solved {
   const at = remembered.findIndex((entry) => sameRanges(entry.ranges, ranges));
   const entry = at === -1 ? { ranges, solved: new Solved(ranges) } : remembered.splice(at, 1)[0];
   remembered.unshift(entry);
-  remembered.length = Math.min(remembered.length, KEPT);
+  forget();
   return entry.solved;
+}
+
+/** A case that was searched is kept longer: to forget it while a cell asks for it would mean to search it anew for ever. */
+function forget(): void {
+  for (let i = remembered.length - 1; i >= KEPT; i--) {
+    if (i >= KEPT_SEARCHED || !remembered[i].solved.wasSearched) remembered.splice(i, 1);
+  }
 }
 
 function sameRanges(one: readonly (Range | null)[], other: readonly (Range | null)[]): boolean {

@@ -2,13 +2,17 @@ import type { Case } from '../cover/case';
 import type { Knot, Shortage } from '../cover/shortage';
 import { joinNames } from '../sheet/write';
 
+/** In place of an answer that the time allowed did not suffice for. */
+export const NOT_IN_TIME = 'not worked out in the time allowed';
+
 /** Names listed in a sentence before the rest is only counted. */
 const NAMED = 5;
 
 /** Why a duty is short, in a sentence or two. */
 export function shortageReason(kase: Case, shortage: Shortage): string {
   const { listed, barred, away, eligible, open, knot } = shortage;
-  if (open > 0) return knot.duties.length === 1 ? knotReason(kase, knot) : `Part of bottleneck ${knot.number}: ${lowerFirst(knotReason(kase, knot))}`;
+  if (open > 0 && knot === null) return 'Its people are needed elsewhere; which duties it stands back for was not worked out.';
+  if (open > 0 && knot !== null) return knot.duties.length === 1 ? knotReason(kase, knot) : `Part of bottleneck ${knot.number}: ${lowerFirst(knotReason(kase, knot))}`;
   if (listed === 0 && eligible === 0) return 'Nobody is listed as able to take it.';
   if (eligible === 0 && away === 0) return `${everybody(listed)} barred from it.`;
   if (eligible === 0 && barred === 0) return `${everybody(listed)} away at that time.`;
@@ -17,14 +21,15 @@ export function shortageReason(kase: Case, shortage: Shortage): string {
 }
 
 /** Why the duties of a knot cannot all be covered: Hall's condition in numbers and names. */
-export function knotReason(kase: Case, { duties, people, needed, places }: Knot): string {
+export function knotReason(kase: Case, { duties, people, needed, places, isSmallest }: Knot): string {
   if (people.length === 0) return `Nobody may take ${duties.length === 1 ? 'this duty' : 'these duties'}.`;
   const what = duties.length === 1 ? 'this duty' : `these ${duties.length} duties (${names(kase.duties, duties)})`;
   const who = people.length > NAMED ? `${people.length} people` : listInWords(people.map((p) => kase.people[p].name));
   const they = people.length === 1 ? 'has' : 'they have';
   const seats = needed === 1 ? 'the 1 seat' : `the ${needed} seats`;
   const room = places === 0 ? `no room for ${needed === 1 ? 'it' : `any of ${seats}`}` : `room for at most ${places} of ${seats} needed`;
-  return `Only ${who} can take ${what}, and ${they} ${room}.`;
+  const caution = isSmallest ? '' : ' Whether fewer duties than these are short by as much was not worked out in the time allowed.';
+  return `Only ${who} can take ${what}, and ${they} ${room}.${caution}`;
 }
 
 /** `Ann, Bo and Cy`; with semicolons where a name holds a comma itself. */

@@ -1,5 +1,6 @@
 import type { Spill } from '../sheet/range';
 import { writeTable } from '../sheet/write';
+import { NOT_IN_TIME } from './reasons';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import type { Solved } from './solved';
 
@@ -22,8 +23,9 @@ export const REMEDIES: CaseFunction = {
 
 function spillRemedies(solved: Solved): Spill {
   const kase = solved.case;
-  const { plan } = solved.solution;
+  const { plan } = solved.outcome;
   const found = solved.remedies;
+  if (found === null) return writeTable(headings(COLUMNS), [], NOT_IN_TIME);
   const rows: (string | number)[][] = found.changes.map(({ person, duty, price }, i) => [
     i + 1,
     duty === null ? 'one more place' : 'make eligible',

@@ -1,29 +1,50 @@
 import { absences, type Absence } from '../cover/absences';
 import type { Case } from '../cover/case';
+import { choices, type Use } from '../cover/choices';
 import { fingerprint } from '../cover/fingerprint';
+import { gains } from '../cover/gains';
+import { openPairs, type OpenPairs } from '../cover/openPairs';
+import { planOf, type Plan } from '../cover/plan';
 import { remedies, type Remedies } from '../cover/remedies';
-import { shortages, type Shortage } from '../cover/shortage';
+import type { NotFlow } from '../cover/reduce';
+import { knots, shortages, type Shortage } from '../cover/shortage';
 import { solve, type Solution } from '../cover/solve';
-import { usedFeatures } from '../sheet/features';
+import type { Answers, Found, Task } from '../exact/answers';
 import { readCase } from '../sheet/readCase';
 import type { Range } from '../sheet/range';
 import type { Reading } from '../sheet/reading';
-import { crossingMessage, Refusal, refusalOf } from './refusal';
+import { Asking } from './asking';
+import { notFlowMessage, Refusal } from './refusal';
+
+/** The plan of a case, however it was come by. */
+export interface Outcome {
+  readonly plan: Plan;
+  readonly open: OpenPairs;
+  readonly method: 'flow' | 'exact search';
+  /** What a search knows of its plan; null for a flow. */
+  readonly found: Found | null;
+  /** Faults in the proof of a flow; empty: proven best. */
+  readonly faults: readonly string[];
+}
 
 /**
  * One case with all that is known of it; equal inputs share one. Everything beyond the reading is
- * worked out when first asked for and then kept.
+ * worked out when first asked for and then kept. Where a case is no flow, it is searched away from
+ * this thread, and whoever asks meanwhile gets a Busy thrown.
  */
 export class Solved {
   readonly reading: Reading;
-  #solution: Solution | Error | null = null;
+  readonly #asking: Asking;
+  #flow: Solution | NotFlow | null = null;
+  #outcome: Outcome | null = null;
   #shortages: readonly Shortage[] | null = null;
   #absences: readonly Absence[] | null = null;
-  #remedies: Remedies | Error | null = null;
+  #remedies: Remedies | NotFlow | 'too many' | null = null;
   #fingerprint: string | null = null;
 
   constructor(ranges: readonly (Range | null)[]) {
     this.reading = readCase(ranges);
+    this.#asking = new Asking(this);
   }
 
   /**
@@ -36,40 +57,80 @@ export class Solved {
   }
 
   /**
-   * The best plan and its flow.
-   * @throws InputFault like `case`; Refusal where the case needs what is not built yet
+   * The best plan and its flow, for what only a flow can tell.
+   * @throws InputFault like `case`; Refusal where the case is no flow
    */
   get solution(): Solution {
-    this.#solution ??= this.#solve();
-    if (this.#solution instanceof Error) throw this.#solution;
-    return this.#solution;
+    const flow = this.#solve();
+    if ('crossing' in flow) throw new Refusal(`This is answered for flows only. ${notFlowMessage(this.case, flow)}`);
+    return flow;
+  }
+
+  /** True where the case is answered by a flow, at once; false where it is searched. */
+  get isFlow(): boolean {
+    return !('crossing' in this.#solve());
+  }
+
+  /**
+   * The best plan.
+   * @throws InputFault like `case`; Busy while it is searched for; Refusal where that failed
+   */
+  get outcome(): Outcome {
+    this.#outcome ??= this.#makeOutcome();
+    return this.#outcome;
   }
 
   /**
    * The duties that are short in the best plan, in table order.
-   * @throws like `solution`
+   * @throws like `outcome`
    */
   get shortages(): readonly Shortage[] {
-    this.#shortages ??= shortages(this.case, this.solution);
+    this.#shortages ??= this.#findShortages();
     return this.#shortages;
   }
 
   /**
-   * What the absence of each person would cost.
-   * @throws like `solution`
+   * Seats more that could be covered if one person alone took one more, by person; null: not worked out in time.
+   * @throws like `outcome`
    */
-  get absences(): readonly Absence[] {
-    this.#absences ??= absences(this.case, this.solution);
+  get gains(): readonly (number | null)[] {
+    const flow = this.#solve();
+    return 'crossing' in flow ? this.#ask('gains') : Array.from(gains(flow.reduction, flow.residual));
+  }
+
+  /**
+   * How the plans that cover as well use each pair; null: not worked out in time.
+   * @throws like `outcome`
+   */
+  get choices(): readonly (Use | null)[] {
+    const flow = this.#solve();
+    return 'crossing' in flow ? this.#ask('choices') : choices(flow);
+  }
+
+  /**
+   * What the absence of each person would cost, by person; null: not worked out in time.
+   * @throws like `outcome`
+   */
+  get absences(): readonly (Absence | null)[] {
+    const flow = this.#solve();
+    if ('crossing' in flow) return this.#ask('absences');
+    this.#absences ??= absences(this.case, flow);
     return this.#absences;
   }
 
   /**
-   * The cheapest remedies.
-   * @throws like `solution`; Refusal also where there is too much to look at
+   * The cheapest remedies; null: not worked out in time.
+   * @throws like `outcome`; Refusal also where there is too much to look at
    */
-  get remedies(): Remedies {
-    this.#remedies ??= this.#findRemedies();
-    if (this.#remedies instanceof Error) throw this.#remedies;
+  get remedies(): Remedies | null {
+    const { plan } = this.outcome;
+    if (plan.covered === plan.needed) return { changes: [], covered: plan.covered, faults: [] };
+    this.#remedies ??= remedies(this.case) ?? 'too many';
+    if (this.#remedies === 'too many') {
+      throw new Refusal('There are more than a million possible pairs of duties and people to look at. Ask about a part of the duties.');
+    }
+    if ('crossing' in this.#remedies || !this.isFlow) return this.#ask('remedies');
+    if (this.#remedies.faults.length > 0) throw new Refusal(`The remedies could not be proven cheapest: ${this.#remedies.faults[0]}`);
     return this.#remedies;
   }
 
@@ -82,23 +143,53 @@ export class Solved {
     return this.#fingerprint;
   }
 
-  #findRemedies(): Remedies | Error {
-    const kase = this.case;
-    const { plan } = this.solution;
-    if (plan.covered === plan.needed) return { changes: [], covered: plan.covered, faults: [] };
-    const found = remedies(kase);
-    if (found === null) {
-      return new Refusal('There are more than a million possible pairs of duties and people to look at. Ask about a part of the duties.');
-    }
-    if ('crossing' in found) return new Refusal(crossingMessage(kase, found));
-    return found.faults.length > 0 ? new Refusal(`The remedies could not be proven cheapest: ${found.faults[0]}`) : found;
+  /** True where asking costs no search: a flow tells it, or the search is over. */
+  isAtHand(task: Task): boolean {
+    return this.isFlow || this.#asking.has(task);
   }
 
-  #solve(): Solution | Error {
-    const kase = this.case;
-    const refusal = refusalOf(usedFeatures(kase, this.reading.featureRows));
-    if (refusal !== null) return refusal;
-    const solution = solve(kase);
-    return 'crossing' in solution ? new Refusal(crossingMessage(kase, solution)) : solution;
+  /** True where anything of it was searched for, so that forgetting it is dear. */
+  get wasSearched(): boolean {
+    return this.#asking.wasAsked;
+  }
+
+  /** What is being searched for, for whoever shows it; null: nothing. */
+  get searching(): Asking['underWay'] {
+    return this.#asking.underWay;
+  }
+
+  /** Ends the search for the plan and takes the best one found so far. */
+  stop(): void {
+    this.#asking.stop();
+  }
+
+  /** Ends all searches: no cell asks any more. */
+  drop(): void {
+    this.#asking.drop();
+  }
+
+  #solve(): Solution | NotFlow {
+    this.#flow ??= solve(this.case);
+    return this.#flow;
+  }
+
+  #makeOutcome(): Outcome {
+    const flow = this.#solve();
+    if (!('crossing' in flow)) return { plan: flow.plan, open: flow.reduction.open, method: 'flow', found: null, faults: flow.faults };
+    const found = this.#asking.ask('plan', null);
+    return { plan: planOf(this.case, found.held), open: openPairs(this.case), method: 'exact search', found, faults: [] };
+  }
+
+  #findShortages(): readonly Shortage[] {
+    const { plan, open } = this.outcome;
+    if (plan.covered === plan.needed) return [];
+    const flow = this.#solve();
+    return shortages(this.case, open, plan, 'crossing' in flow ? this.#ask('bottlenecks') : knots(this.case, flow));
+  }
+
+  /** Asks for more than the plan, once that is found. */
+  #ask<T extends Exclude<Task, 'plan'>>(task: T): Answers[T] {
+    const { found } = this.outcome;
+    return this.#asking.ask(task, found);
   }
 }

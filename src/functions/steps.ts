@@ -27,12 +27,12 @@ export const STEPS: CaseFunction = {
 function spillSteps(solved: Solved): Spill {
   const kase = solved.case;
   if (kase.current === null) return writeTable(headings(COLUMNS), [], 'No current plan is given');
-  const { plan, reduction } = solved.solution;
+  const { plan, open } = solved.outcome;
   const held = new Int32Array(kase.people.length);
   for (const { person } of kase.current) held[person]++;
   const name = (person: number | null): string => (person === null ? NOBODY : kase.people[person].name);
   const rows: (string | number)[][] = [];
-  steps(kase, reduction.open, plan).forEach((chain, c) => {
+  steps(kase, open, plan).forEach((chain, c) => {
     chain.forEach(({ duty, from, to }, i) => {
       if (from !== null) held[from]--;
       if (to !== null) held[to]++;

@@ -2,6 +2,7 @@ import { writeTable } from '../sheet/write';
 import type { Spill } from '../sheet/range';
 import { CASE_PARAMETERS, headings, type CaseFunction } from './declaration';
 import { currentKept, minimumsMissed, rankTotal } from './measures';
+import { proofWords } from './proofWords';
 import type { Solved } from './solved';
 
 const COLUMNS = [
@@ -20,7 +21,7 @@ export const SUMMARY: CaseFunction = {
 
 function summary(solved: Solved): Spill {
   const kase = solved.case;
-  const { plan, faults } = solved.solution;
+  const { plan, method } = solved.outcome;
   const rows: (readonly [string, string | number])[] = [
     ['Seats needed', plan.needed],
     ['Seats covered', plan.covered],
@@ -29,8 +30,8 @@ function summary(solved: Solved): Spill {
     ['Minimums missed', minimumsMissed(kase, plan)],
     ['Current kept', kase.current === null ? 'no current plan given' : currentKept(kase, plan)],
     ['Rank total', kase.ranked ? rankTotal(kase, plan) : 'no ranks given'],
-    ['Method', 'flow'],
-    ['Proven', faults.length === 0 ? 'proven best' : `not proven: ${faults[0]}`],
+    ['Method', method],
+    ['Proven', proofWords(solved.outcome)],
     ['Findings', solved.reading.findings.length],
     ['Fingerprint', solved.fingerprint],
   ];

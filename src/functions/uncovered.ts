@@ -27,7 +27,7 @@ function uncovered(solved: Solved): Spill {
   const rows = solved.shortages.map((shortage) => {
     const { name, need } = kase.duties[shortage.duty];
     const { short, eligible, knot } = shortage;
-    return [name, short, need, eligible, knot.number, shortageReason(kase, shortage)];
+    return [name, short, need, eligible, knot?.number ?? '', shortageReason(kase, shortage)];
   });
   return writeTable(headings(COLUMNS), rows, 'Every seat is covered');
 }

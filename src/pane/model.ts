@@ -1,11 +1,14 @@
 import { LAST_PRIORITY } from '../cover/case';
+import { knotsOf } from '../functions/bottlenecks';
 import type { Call } from '../functions/journal';
 import { knotReason, shortageReason } from '../functions/reasons';
+import { proofWords } from '../functions/proofWords';
 import { beyondHelp } from '../functions/remedies';
 import type { Solved } from '../functions/solved';
 import { parseAddress } from '../host/address';
 import type { Finding } from '../sheet/fault';
 import { joinNames } from '../sheet/write';
+import { searchView, type SearchView } from './searchModel';
 
 /** What the pane shows, worked out from the calls alone. */
 export interface PaneModel {
@@ -22,6 +25,8 @@ export interface CaseView {
   readonly cells: readonly CellView[];
   /** The sheets these cells are on. */
   readonly sheets: readonly string[];
+  /** What is being searched for; null: nothing. */
+  readonly search: SearchView | null;
   /** Seats, or null where there is no plan. */
   readonly seats: SeatCount | null;
   /** The same by priority, most urgent first; empty where there is one only. */
@@ -69,9 +74,10 @@ export function paneModel(calls: readonly Call[]): PaneModel {
   const bySolved = new Map<Solved, Call[]>();
   const strays: CellError[] = [];
   for (const call of calls) {
-    if (call.solved !== null) {
-      const group = bySolved.get(call.solved);
-      if (group === undefined) bySolved.set(call.solved, [call]);
+    const solved = call.solved ?? call.waitsFor;
+    if (solved !== null) {
+      const group = bySolved.get(solved);
+      if (group === undefined) bySolved.set(solved, [call]);
       else group.push(call);
     } else if (call.answer.kind === 'fault') {
       strays.push({ address: call.address, functionId: call.functionId, message: call.answer.message });
@@ -105,26 +111,41 @@ function caseView(solved: Solved, calls: readonly Call[]): CaseView {
   const messages = calls.flatMap(({ answer }) => (answer.kind === 'fault' ? [answer.message] : []));
   const errors = faults.length > 0 ? faults.map(({ message }) => message) : [...new Set(messages)];
   const sheets = [...new Set(cells.map(({ address }) => parseAddress(address)?.sheet ?? 'a cell'))];
-  const common = { id: cells[0].address, cells, sheets, findings: groupFindings(findings), errors };
+  const search = faults.length > 0 ? null : searchView(solved);
+  const common = { id: cells[0].address, cells, sheets, findings: groupFindings(findings), errors, search };
   if (faults.length > 0 || !isSolvable(solved)) {
     return { ...common, seats: null, priorities: [], proof: '', short: [], bottlenecks: [], remedies: [], fragile: [], fingerprint: '' };
   }
-  const { plan, faults: proofFaults } = solved.solution;
+  const { plan } = solved.outcome;
+  const knowsWhy = solved.isAtHand('bottlenecks');
   return {
     ...common,
     seats: { needed: plan.needed, covered: plan.covered },
     priorities: countPriorities(solved),
-    proof: proofFaults.length === 0 ? 'No plan is better: proven.' : `Not proven: ${proofFaults[0]}`,
-    short: solved.shortages.map((shortage) => ({
-      duty: solved.case.duties[shortage.duty].name,
-      seats: shortage.short,
-      reason: shortageReason(solved.case, shortage),
-    })),
-    bottlenecks: bottleneckViews(solved),
-    remedies: isSmall(solved) ? remedyViews(solved) : null,
-    fragile: isSmall(solved) ? fragileViews(solved) : null,
+    proof: sentence(proofWords(solved.outcome)),
+    short: knowsWhy ? shortViews(solved) : plainShortViews(solved),
+    bottlenecks: knowsWhy ? bottleneckViews(solved) : [],
+    remedies: isSmall(solved) && solved.isAtHand('remedies') ? remedyViews(solved) : null,
+    fragile: isSmall(solved) && solved.isAtHand('absences') ? fragileViews(solved) : null,
     fingerprint: solved.fingerprint,
   };
+}
+
+function sentence(words: string): string {
+  return `${words.charAt(0).toUpperCase()}${words.slice(1)}.`;
+}
+
+function shortViews(solved: Solved): CaseView['short'] {
+  return solved.shortages.map((shortage) => ({
+    duty: solved.case.duties[shortage.duty].name,
+    seats: shortage.short,
+    reason: shortageReason(solved.case, shortage),
+  }));
+}
+
+/** Short duties while nobody has asked why. */
+function plainShortViews({ case: { duties }, outcome: { plan } }: Solved): CaseView['short'] {
+  return duties.flatMap(({ name, need }, d) => (plan.heldOfDuty[d] < need ? [{ duty: name, seats: need - plan.heldOfDuty[d], reason: '' }] : []));
 }
 
 /** Small enough for remedies and absences to be worked out at every keystroke. */
@@ -133,13 +154,16 @@ function isSmall({ case: { pairs, duties, people } }: Solved): boolean {
 }
 
 function bottleneckViews(solved: Solved): CaseView['bottlenecks'] {
-  const knots = [...new Set(solved.shortages.map(({ knot }) => knot))].sort((a, b) => a.number - b.number);
-  return knots.map((knot) => ({ number: knot.number, seats: knot.needed - knot.places, reason: knotReason(solved.case, knot) }));
+  return knotsOf(solved).map((knot) => ({
+    number: knot.number,
+    seats: knot.needed - knot.places,
+    reason: knotReason(solved.case, knot),
+  }));
 }
 
 function remedyViews(solved: Solved): string[] | null {
   const { duties, people } = solved.case;
-  const { plan } = solved.solution;
+  const { plan } = solved.outcome;
   const found = remediesOf(solved);
   if (found === null) return null;
   const { changes, covered } = found;
@@ -161,7 +185,7 @@ function remediesOf(solved: Solved): Solved['remedies'] | null {
 function fragileViews(solved: Solved): NonNullable<CaseView['fragile']> {
   const { duties, people } = solved.case;
   return solved.absences
-    .filter(({ lost }) => lost > 0)
+    .flatMap((absence) => (absence === null || absence.lost === 0 ? [] : [absence]))
     .sort((a, b) => b.lost - a.lost)
     .map(({ person, lost, dutiesLost }) => ({
       person: people[person].name,
@@ -170,22 +194,22 @@ function fragileViews(solved: Solved): NonNullable<CaseView['fragile']> {
     }));
 }
 
-/** A case may be well written and still ask for what is not answered yet. */
+/** True where the plan is at hand. */
 function isSolvable(solved: Solved): boolean {
   try {
-    return solved.solution.plan.needed >= 0;
+    return solved.isAtHand('plan') && solved.outcome.plan.needed >= 0;
   } catch {
     return false;
   }
 }
 
-function countPriorities({ case: kase, solution }: Solved): (SeatCount & { label: string })[] {
+function countPriorities({ case: kase, outcome }: Solved): (SeatCount & { label: string })[] {
   const counts = new Map<number, { needed: number; covered: number }>();
   kase.duties.forEach(({ need, priority }, d) => {
     const count = counts.get(priority) ?? { needed: 0, covered: 0 };
     counts.set(priority, count);
     count.needed += need;
-    count.covered += Math.min(need, solution.plan.heldOfDuty[d]);
+    count.covered += Math.min(need, outcome.plan.heldOfDuty[d]);
   });
   if (counts.size < 2) return [];
   return [...counts]

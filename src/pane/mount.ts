@@ -1,6 +1,7 @@
 import { render } from 'lit-html';
 import type { Journal } from '../functions/journal';
 import { NAMESPACE } from '../functions/registry';
+import { onSearch } from '../functions/searches';
 import type { WorkbookPort } from '../host/port';
 import { paneModel, spokenSummary } from './model';
 import { STYLE } from './style';
@@ -8,6 +9,8 @@ import { paneView, type Actions } from './view';
 
 /** Recalculations within this time are drawn once, in milliseconds. */
 const CALM = 60;
+
+const SECOND = 1000;
 
 /**
  * Shows the pane in an element, in a page or in a shadow root, and keeps it up to date.
@@ -55,7 +58,11 @@ export function mountPane(root: HTMLElement, port: WorkbookPort, journal: Journa
     timer = setTimeout(() => void refresh(), CALM);
   };
 
-  const ends = [port.onRecalculated(soon), journal.onRecord(soon)];
+  // A search tells of its progress; its seconds are counted while it is under way.
+  const clock = setInterval(() => {
+    if (body.querySelector('.dp-search') !== null) draw();
+  }, SECOND);
+  const ends = [port.onRecalculated(soon), journal.onRecord(soon), onSearch(soon), () => clearInterval(clock)];
   draw();
   soon();
   return () => {

@@ -1,6 +1,7 @@
 import { html, nothing, type TemplateResult } from 'lit-html';
 import { repeat } from 'lit-html/directives/repeat.js';
 import { counted, type CaseView, type CellError, type CellView, type FindingGroup, type PaneModel } from './model';
+import type { SearchView } from './searchModel';
 
 /** What the views may ask for. */
 export interface Actions {
@@ -53,6 +54,7 @@ function caseView(view: CaseView, opened: Opened, actions: Actions): TemplateRes
     <section class="dp-case" aria-label=${`Case on ${sheets.join(', ')}`}>
       <h2>Case on <bdi>${sheets.join(', ')}</bdi></h2>
       ${errors.length > 0 ? list(`${id} errors`, errors, errorView, opened, actions) : nothing}
+      ${view.search === null ? nothing : searchView(view.search)}
       ${view.seats === null ? nothing : planView(view, opened, actions)}
       ${findings.length > 0 ? findingsView(id, findings, opened, actions) : nothing}
       <details>
@@ -61,6 +63,19 @@ function caseView(view: CaseView, opened: Opened, actions: Actions): TemplateRes
         ${view.fingerprint === '' ? nothing : html`<p class="dp-soft">Fingerprint of the case: <code>${view.fingerprint}</code></p>`}
       </details>
     </section>
+  `;
+}
+
+function searchView({ what, covered, needed, seconds, allowed, stop }: SearchView): TemplateResult {
+  return html`
+    <div class="dp-search">
+      <p>Searching for ${what}.</p>
+      <p class="dp-soft">
+        ${covered === null ? nothing : html`${covered.toLocaleString('en-GB')} of ${counted(needed, 'seat', 'seats')} covered so far. `}
+        ${counted(seconds, 'second', 'seconds')} of at most ${allowed.toLocaleString('en-GB')}.
+      </p>
+      ${stop === null ? nothing : html`<button type="button" @click=${stop}>Stop and take the best plan so far</button>`}
+    </div>
   `;
 }
 

@@ -2,7 +2,6 @@ import { LAST_PRIORITY, type Case, type Duty, type Person } from '../cover/case'
 import { casePairs, caseSeats } from './casePairs';
 import { caseRules } from './caseRules';
 import { makeDirectory, type Directory } from './directory';
-import { featureRows } from './featureRows';
 import { findFixedOddities } from './fixedChecks';
 import { Names } from './name';
 import { findStrays, findTwins, findUnusedDuties, findUnusedPeople, type Listing } from './nameChecks';
@@ -47,7 +46,6 @@ export function readCase(ranges: readonly (Range | null | undefined)[]): Reading
     case: faults.length > 0 ? null : kase,
     faults,
     findings: report.findings(),
-    featureRows: featureRows(tables),
   };
 }
 

@@ -1,6 +1,5 @@
 import type { Case } from '../cover/case';
 import type { Finding, InputFault } from './fault';
-import type { FeatureRows } from './features';
 
 /** What reading the ranges of a case gave. */
 export interface Reading {
@@ -9,6 +8,4 @@ export interface Reading {
   /** In the order of the tables, then of the rows. */
   readonly faults: readonly InputFault[];
   readonly findings: readonly Finding[];
-  /** Where each feature is first used, for `usedFeatures`. */
-  readonly featureRows: FeatureRows;
 }

@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { absences } from '../../src/cover/absences';
 import { choices } from '../../src/cover/choices';
 import { remedies } from '../../src/cover/remedies';
-import { shortages, type Knot } from '../../src/cover/shortage';
+import { knots as knotsOfFlow, shortages, type Knot } from '../../src/cover/shortage';
 import { solve } from '../../src/cover/solve';
 import { readCase } from '../../src/sheet/readCase';
 import type { Range } from '../../src/sheet/range';
@@ -119,7 +119,8 @@ describe('bottlenecks', () => {
       fc.property(specs({ duties: 6, people: 4 }), (spec) => {
         const answer = solved(spec);
         const { kase, plan } = answer;
-        const knots = [...new Set(shortages(kase, answer).map(({ knot }) => knot))] as Knot[];
+        const found = shortages(kase, answer.reduction.open, plan, knotsOfFlow(kase, answer));
+        const knots = [...new Set(found.map(({ knot }) => knot))] as Knot[];
         expect(knots.every((knot) => knot !== null)).toBe(true);
         const all = knots.flatMap(({ duties }) => duties);
         expect(new Set(all).size).toBe(all.length);

@@ -20,7 +20,7 @@ const RULES: Range = [['Rule', 'Duty', 'Person', 'Value'], ['Fixed', 'Tue desk',
 
 function spill(id: string, ...ranges: (Range | null)[]): (string | number | boolean)[][] {
   const answer = invoke(FUNCTIONS.find((fn) => fn.id === id)!, ranges, 'A!A1', new Journal());
-  if (answer.kind === 'fault') throw new Error(answer.message);
+  if (answer.kind !== 'spill') throw new Error(JSON.stringify(answer));
   return answer.spill.map((row) => [...row]);
 }
 

@@ -29,7 +29,7 @@ const RULES: Range = [['Rule', 'Duty', 'Person', 'Value'], ['Away', '', 'Quin', 
 
 function rows(id: string, ...ranges: (Range | null)[]): unknown[][] {
   const answer = invoke(FUNCTIONS.find((fn) => fn.id === id)!, ranges, 'A!A1', new Journal());
-  if (answer.kind === 'fault') throw new Error(answer.message);
+  if (answer.kind !== 'spill') throw new Error(JSON.stringify(answer));
   return answer.spill.slice(1).map((row) => [...row]);
 }
 

@@ -12,6 +12,7 @@ function spill(id: string, ranges: readonly (Range | null)[]): string[][] {
   if (fn === undefined) throw new Error(`no function ${id}`);
   const answer = invoke(fn, ranges, 'Sheet1!A1', new Journal());
   if (answer.kind === 'fault') return [[answer.message]];
+  if (answer.kind === 'busy') throw new Error('a search');
   return answer.spill.map((row) => row.map((cell) => String(cell).toLowerCase()));
 }
 

@@ -44,7 +44,7 @@ function faultsOf(tables: readonly Table[], proof: Table): number[] {
 
 function proofOf(ranges: readonly (Range | null)[]): Table {
   const answer = invoke(PROOF, ranges, 'A!A1', new Journal());
-  if (answer.kind === 'fault') throw new Error(answer.message);
+  if (answer.kind !== 'spill') throw new Error(JSON.stringify(answer));
   return answer.spill.map((row) => [...row]);
 }
 

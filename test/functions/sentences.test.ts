@@ -41,6 +41,7 @@ function spoken(): Map<string, Sentences> {
       if (fn.id === 'PAIRS' || fn.id === 'FINDINGS' || fn.id === 'PROOF' || fn.id === 'GRID') continue;
       const own = fn.id === 'CHECK' ? [ranges[4] ?? [], ...ranges.slice(0, 4)] : ranges;
       const answer = invoke(fn, own, 'A!A1', new Journal());
+      if (answer.kind === 'busy') throw new Error('a search');
       const said = answer.kind === 'fault' ? [answer.message] : answer.spill.slice(1).flat();
       for (const cell of said) if (typeof cell === 'string' && cell.includes(' ') && !isName.test(cell)) of.get(fn.id)!.add(cell);
     }
@@ -64,7 +65,7 @@ function empty(): string[] {
   const nothing: Range = [['Duty', 'Person']];
   const lines = FUNCTIONS.map((fn) => {
     const answer = invoke(fn, fn.id === 'PAIRS' ? [[]] : fn.id === 'CHECK' ? [nothing, nothing, [[1]]] : [nothing, [[1]]], 'A!A1', new Journal());
-    return `- ${fn.id}: ${answer.kind === 'fault' ? answer.message : String(answer.spill[1]?.[0])}`;
+    return `- ${fn.id}: ${answer.kind === 'spill' ? String(answer.spill[1]?.[0]) : answer.kind === 'fault' ? answer.message : ''}`;
   });
   return lines.filter((line) => line.includes(' ', line.indexOf(':') + 2));
 }

@@ -42,7 +42,7 @@ function at(place: string, sheet = 'S') {
   return model.getters.getEvaluatedCell({ sheetId: model.getters.getSheetIdByName(sheet)!, col, row: Number(place.slice(1)) - 1 });
 }
 
-beforeAll(() => registerInEngine(engine, [...FUNCTIONS, PROBE, BROKEN], journal));
+beforeAll(() => registerInEngine(engine, [...FUNCTIONS, PROBE, BROKEN], journal, () => undefined));
 beforeEach(() => {
   const sheet = (name: string) => ({ name, hidden: false, cells: [], widths: new Map(), merges: [], frozen: { rows: 0, columns: 0 } });
   model = new engine.Model(toEngineData({ sheets: [sheet('S'), sheet("O'Neil")], names: [], lost: [] }, engine));

@@ -15,7 +15,7 @@ import { engine } from '../helpers/engine';
 import { unzip } from '../helpers/zip';
 
 const bytes = new Uint8Array(readFileSync(join(import.meta.dirname, '../../assets/demo.xlsx')));
-registerInEngine(engine, FUNCTIONS, new Journal());
+registerInEngine(engine, FUNCTIONS, new Journal(), () => undefined);
 
 /** What a person typed in a book, so that two books can be compared. */
 function typed({ sheets, names }: Book) {

@@ -10,15 +10,19 @@ import { spilledRange } from './spilledRange';
 /** Error codes that sheets at large know and the engine does not. */
 const FURTHER_ERRORS = ['#VALUE!', '#REF!', '#CALC!', '#BUSY!'];
 
-/** Registers the functions with the sheet engine as DUTY.ASSIGN and so on. To be called before a model is made. */
-export function registerInEngine(engine: Engine, functions: readonly CellFunction[], journal: Journal): void {
+/**
+ * Registers the functions with the sheet engine as DUTY.ASSIGN and so on. To be called before a model is made.
+ *
+ * @param recalculate called when answers that were searched for have come
+ */
+export function registerInEngine(engine: Engine, functions: readonly CellFunction[], journal: Journal, recalculate: () => void): void {
   const { functionRegistry, errorTypes } = engine.registries;
   for (const code of FURTHER_ERRORS) errorTypes.add(code);
-  for (const fn of functions) functionRegistry.replace(`${NAMESPACE}.${fn.id}`, describe(fn, journal, errorTypes));
+  for (const fn of functions) functionRegistry.replace(`${NAMESPACE}.${fn.id}`, describe(fn, journal, errorTypes, recalculate));
   functionRegistry.replace('SPILLED.RANGE', spilledRange(errorTypes));
 }
 
-function describe(fn: CellFunction, journal: Journal, codes: ReadonlySet<string>): EngineFunction {
+function describe(fn: CellFunction, journal: Journal, codes: ReadonlySet<string>, recalculate: () => void): EngineFunction {
   return {
     description: fn.summary,
     args: fn.parameters.map(({ name, description, optional }) => ({
@@ -37,6 +41,12 @@ function describe(fn: CellFunction, journal: Journal, codes: ReadonlySet<string>
         }
         const ranges = fn.parameters.map((_, i) => toRange(args[i], codes));
         const answer = invoke(fn, ranges, addressOf(this), journal);
+        if (answer.kind === 'busy') {
+          void answer.settled.then((isWorthAsking) => {
+            if (isWorthAsking) recalculate();
+          });
+          return { value: '#BUSY!', message: 'The best plan is being searched for. The pane shows how far it is.' };
+        }
         return answer.kind === 'fault' ? { value: '#VALUE!', message: answer.message } : fromSpill(answer.spill);
       } catch (error) {
         return { value: '#VALUE!', message: `DUTY.${fn.id} could not run here: ${String(error)}` };

@@ -8,6 +8,7 @@ export class WorkbenchWorkbook implements WorkbookPort {
   #model: EngineModel;
   readonly #listeners = new Set<() => void>();
   #isTold = true;
+  #isDue = false;
 
   constructor(model: EngineModel) {
     this.#model = model;
@@ -54,6 +55,16 @@ export class WorkbenchWorkbook implements WorkbookPort {
       this.#model.selection.selectCell(position.col, position.row);
     }
     return Promise.resolve();
+  }
+
+  /** Calculates every formula anew once this turn is over; several askings are one calculation. */
+  recalculateSoon(): void {
+    if (this.#isDue) return;
+    this.#isDue = true;
+    setTimeout(() => {
+      this.#isDue = false;
+      this.#model.dispatch('EVALUATE_CELLS');
+    });
   }
 
   recalculate(): Promise<void> {

@@ -7,7 +7,7 @@ import { openCsv } from '../../../src/workbench/files/openCsv';
 import { makeModel } from '../../../src/workbench/files/room';
 import { engine } from '../../helpers/engine';
 
-registerInEngine(engine, FUNCTIONS, new Journal());
+registerInEngine(engine, FUNCTIONS, new Journal(), () => undefined);
 
 describe('sheets', () => {
   it('have room for answers of thousands of rows, and for more of them', () => {

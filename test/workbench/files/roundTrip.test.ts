@@ -11,7 +11,7 @@ import { saveXlsx } from '../../../src/workbench/files/saveXlsx';
 import { toEngineData } from '../../../src/workbench/files/toEngine';
 import { engine } from '../../helpers/engine';
 
-registerInEngine(engine, FUNCTIONS, new Journal());
+registerInEngine(engine, FUNCTIONS, new Journal(), () => undefined);
 
 /** A sheet with these cells and nothing else set. */
 function sheetOf(cells: readonly BookCell[], name = 'S'): BookSheet {
