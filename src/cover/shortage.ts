@@ -37,6 +37,8 @@ export interface Knot {
   readonly places: number;
   /** True where it is known that no duty of it can be spared; a search may not have had the time to try. */
   readonly isSmallest: boolean;
+  /** True where fewer seats would lack if urgent duties did not come first. */
+  readonly isByPriority: boolean;
 }
 
 /**
@@ -90,6 +92,7 @@ interface KnotDraft {
   needed: number;
   places: number;
   readonly isSmallest: boolean;
+  readonly isByPriority: boolean;
 }
 
 /** The knots of a flow, in the order of their numbers. Every short duty is in one, if only by itself. */
@@ -105,7 +108,7 @@ export function knots(kase: Case, { reduction, residual, plan }: Solution): read
   kase.duties.forEach(({ need }, duty) => {
     const number = part[dutyNode[duty]];
     if (number === -1) return;
-    const knot = drafts.get(number) ?? { number: drafts.size + 1, duties: [], people: [], needed: 0, places: 0, isSmallest: true };
+    const knot = drafts.get(number) ?? blank(drafts.size + 1);
     drafts.set(number, knot);
     knotOf.set(duty, knot);
     knot.duties.push(duty);
@@ -124,4 +127,8 @@ export function knots(kase: Case, { reduction, residual, plan }: Solution): read
   }
   for (const [knot, numbers] of people) knot.people.push(...[...numbers].sort((a, b) => a - b));
   return [...drafts.values()];
+}
+
+function blank(number: number): KnotDraft {
+  return { number, duties: [], people: [], needed: 0, places: 0, isSmallest: true, isByPriority: false };
 }

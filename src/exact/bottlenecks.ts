@@ -17,7 +17,7 @@ export function bottlenecksBySearch(question: Question): Knot[] {
   const open = openPairs(kase);
   const programme = programmeOf(kase, open);
   const plan = planOf(kase, found.held);
-  const sets: { duties: number[]; isSmallest: boolean }[] = [];
+  const sets: KnotSet[] = [];
   const inSome = new Set<number>();
   for (const columns of splitColumns(programme)) {
     const duties = [...new Set(Array.from(columns, (column) => programme.duty[column]))];
@@ -28,16 +28,26 @@ export function bottlenecksBySearch(question: Question): Knot[] {
     try {
       const filter = new Filter(model, programme, short, seconds);
       const left = filter.run(unitsOf(programme, duties));
-      for (const duties of connected(programme, columns, left)) sets.push({ duties, isSmallest: filter.isComplete });
+      const isByPriority = filter.isByPriority(left);
+      for (const part of connected(programme, columns, left)) {
+        const isMixed = new Set(part.map((d) => kase.duties[d].priority)).size > 1;
+        sets.push({ duties: part, isSmallest: filter.isComplete, isByPriority: isByPriority && isMixed });
+      }
     } finally {
       model.dispose();
     }
   }
   // A short duty that nobody is left to take is a bottleneck by itself.
   kase.duties.forEach(({ need }, d) => {
-    if (!inSome.has(d) && plan.heldOfDuty[d] < need) sets.push({ duties: [d], isSmallest: true });
+    if (!inSome.has(d) && plan.heldOfDuty[d] < need) sets.push({ duties: [d], isSmallest: true, isByPriority: false });
   });
   return describe(kase, programme, plan, sets);
+}
+
+interface KnotSet {
+  readonly duties: readonly number[];
+  readonly isSmallest: boolean;
+  readonly isByPriority: boolean;
 }
 
 /** Duties that go together can only be left out together. */
@@ -84,20 +94,36 @@ class Filter {
     return [...kept].flat().sort((a, b) => a - b);
   }
 
+  /** True unless it is plain that as few seats lack where the urgent duties do not come first. */
+  isByPriority(duties: readonly number[]): boolean {
+    const needed = this.#only(new Set(duties));
+    const most = this.#model.bound(this.#seconds());
+    return most === null || needed - most < this.#short;
+  }
+
   /** True where these duties by themselves lack as many seats; false also where that is not known in time. */
   #isAsShort(duties: ReadonlySet<number>): boolean {
-    const needed = [...duties].reduce((sum, d) => sum + this.#programme.need[d], 0);
-    if (needed < this.#short) return false;
+    if (this.#needOf(duties) < this.#short) return false;
     if (this.#seconds() <= 0) {
       this.isComplete = false;
       return false;
     }
-    for (const column of this.#model.columns.keys()) {
-      this.#model.shut(column, !duties.has(this.#programme.duty[this.#model.columns[column]]));
-    }
+    const needed = this.#only(duties);
     const cover = this.#model.cover(this.#seconds);
     if (!cover.proven) this.isComplete = false;
     return cover.proven && needed - cover.total === this.#short;
+  }
+
+  /** Shuts all other duties. @returns seats needed by those left */
+  #only(duties: ReadonlySet<number>): number {
+    for (const column of this.#model.columns.keys()) {
+      this.#model.shut(column, !duties.has(this.#programme.duty[this.#model.columns[column]]));
+    }
+    return this.#needOf(duties);
+  }
+
+  #needOf(duties: ReadonlySet<number>): number {
+    return [...duties].reduce((sum, d) => sum + this.#programme.need[d], 0);
   }
 }
 
@@ -128,10 +154,10 @@ function describe(
   kase: Case,
   programme: Programme,
   plan: ReturnType<typeof planOf>,
-  sets: readonly { duties: number[]; isSmallest: boolean }[],
+  sets: readonly KnotSet[],
 ): Knot[] {
   const ordered = [...sets].sort((a, b) => a.duties[0] - b.duties[0]);
-  return ordered.map(({ duties, isSmallest }, i) => {
+  return ordered.map(({ duties, isSmallest, isByPriority }, i) => {
     const isIn = new Set(duties);
     const people = new Set<number>();
     programme.duty.forEach((d, column) => {
@@ -140,6 +166,6 @@ function describe(
     for (const { duty, person } of kase.fixed) if (isIn.has(duty)) people.add(person);
     const needed = duties.reduce((sum, d) => sum + kase.duties[d].need, 0);
     const places = duties.reduce((sum, d) => sum + Math.min(kase.duties[d].need, plan.heldOfDuty[d]), 0);
-    return { number: i + 1, duties, people: [...people].sort((a, b) => a - b), needed, places, isSmallest };
+    return { number: i + 1, duties, people: [...people].sort((a, b) => a - b), needed, places, isSmallest, isByPriority };
   });
 }

@@ -13,6 +13,9 @@ const LOT_SCALE = 2 ** 10;
 /** The share of the time left that one aim may take, so that something is left for the next. */
 const SHARE = 0.6;
 
+/** The same for the last two, of which one only settles what is open. */
+const LAST_SHARE = 0.9;
+
 /** @public the formulation, for measuring what it is worth */
 export interface SearchOptions {
   readonly seconds: number;
@@ -40,12 +43,13 @@ export function search(highs: Highs, kase: Case, { seconds, formulation, onProgr
       moreSeats: moreSeats(blocks, most, verdicts),
       isComplete,
     });
-    for (const { aim, priority, stage } of stagesOf(kase, programme, staff)) {
+    const stages = stagesOf(kase, programme, staff);
+    for (const [s, { aim, priority, stage }] of stages.entries()) {
       // Names settle what is open between best plans; between plans not known to be best there is nothing to settle.
       if (aim === 'names' && verdicts.some(({ gap }) => gap > 0)) break;
       let gap = 0;
       blocks.forEach((block, b) => {
-        const share = left() * SHARE;
+        const share = left() * (s < stages.length - 2 ? SHARE : LAST_SHARE);
         const stop = performance.now() + (1000 * share) / (blocks.length - b);
         const seconds = (): number => (stop - performance.now()) / 1000;
         const { value, bound } = block.reach(stage, seconds, () => onProgress?.({ aim, found: found() }));

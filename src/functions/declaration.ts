@@ -70,7 +70,7 @@ export const CASE_PARAMETERS: readonly Parameter[] = [
   },
   {
     name: 'duties',
-    description: 'What must be covered: Duty, Need, Priority, Slot, by heading Group; or one number, the need of each. Left out: 1 each.',
+    description: 'What must be covered: Duty, Need, Priority, Slot, by heading Group, Start, End, Load; or one number, the need of each.',
     optional: true,
   },
   {

@@ -21,7 +21,7 @@ export function shortageReason(kase: Case, shortage: Shortage): string {
 }
 
 /** Why the duties of a knot cannot all be covered: Hall's condition in numbers and names. */
-export function knotReason(kase: Case, { duties, people, needed, places, isSmallest }: Knot): string {
+export function knotReason(kase: Case, { duties, people, needed, places, isSmallest, isByPriority }: Knot): string {
   if (people.length === 0) return `Nobody may take ${duties.length === 1 ? 'this duty' : 'these duties'}.`;
   const what = duties.length === 1 ? 'this duty' : `these ${duties.length} duties (${names(kase.duties, duties)})`;
   const who = people.length > NAMED ? `${people.length} people` : listInWords(people.map((p) => kase.people[p].name));
@@ -29,7 +29,8 @@ export function knotReason(kase: Case, { duties, people, needed, places, isSmall
   const seats = needed === 1 ? 'the 1 seat' : `the ${needed} seats`;
   const room = places === 0 ? `no room for ${needed === 1 ? 'it' : `any of ${seats}`}` : `room for at most ${places} of ${seats} needed`;
   const caution = isSmallest ? '' : ' Whether fewer duties than these are short by as much was not worked out in the time allowed.';
-  return `Only ${who} can take ${what}, and ${they} ${room}.${caution}`;
+  const order = isByPriority ? ', the most urgent first' : '';
+  return `Only ${who} can take ${what}, and ${they} ${room}${order}.${caution}`;
 }
 
 /** `Ann, Bo and Cy`; with semicolons where a name holds a comma itself. */

@@ -12,7 +12,7 @@ export class Refusal extends Error {
 
 /** Says why the case is not a flow. */
 export function notFlowMessage(kase: Case, { person, crossing }: NotFlow): string {
-  if (crossing === null || person === null) return 'Loads other than 1 or Together rules tie the seats of a person together.';
+  if (crossing === null || person === null) return 'Here loads other than 1, or Together rules, tie seats to each other.';
   return `For ${kase.people[person].name}, ${nameOf(crossing.one)} and ${nameOf(crossing.other)} overlap without one lying inside the other.`;
 }
 

@@ -62,7 +62,7 @@ export class Solved {
    */
   get solution(): Solution {
     const flow = this.#solve();
-    if ('crossing' in flow) throw new Refusal(`This is answered for flows only. ${notFlowMessage(this.case, flow)}`);
+    if ('crossing' in flow) throw new Refusal(`This is answered only where the limits of every person lie inside one another. ${notFlowMessage(this.case, flow)}`);
     return flow;
   }
 

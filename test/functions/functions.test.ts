@@ -125,7 +125,7 @@ describe('a page without a search', () => {
     const duties: Range = [['Duty', 'Slot', 'Group'], ['Old masters', 'Mon', 'paintings'], ['Sculpture', 'Mon', 'stone'], ['Coins', 'Tue', 'paintings']];
     expect(rows('ASSIGN', PAIRS, [['Person', 'Maximum'], ['Ada', 3], ['Bo', 1], ['Cy', 1]], duties, rules)).toMatch(/no search that could answer it/);
     expect(rows('PROOF', PAIRS, [['Person', 'Maximum'], ['Ada', 3], ['Bo', 1], ['Cy', 1]], duties, rules)).toMatch(
-      /^This is answered for flows only. For Ada, the limit on "(Mon|paintings)" and the limit on "(Mon|paintings)" overlap/,
+      /^This is answered only where the limits of every person lie inside one another. For Ada, the limit on "(Mon|paintings)" and the limit on "(Mon|paintings)" overlap/,
     );
   });
 });
