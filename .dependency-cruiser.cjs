@@ -6,7 +6,8 @@ const rooms = [
   ['sheet', ['cover'], 'sheet/ reads and writes cells; it may know the case of cover/, nothing further out.'],
   ['functions', ['flow', 'cover', 'sheet', 'exact'], 'functions/ may use the rooms inside it, never a host or the pane.'],
   ['host', ['functions', 'sheet', 'cover', 'exact'], 'host/ adapts workbooks to the functions; it must not know the pane or a page.'],
-  ['pane', ['functions', 'sheet', 'cover', 'exact', 'host'], 'pane/ shows what the functions answered, through the port.'],
+  ['desk', ['functions', 'sheet', 'cover', 'exact', 'host'], 'desk/ turns cases into sheets and tables into cases; it knows the port, no page.'],
+  ['pane', ['desk', 'functions', 'sheet', 'cover', 'exact', 'host'], 'pane/ shows what the functions answered, through the port.'],
   ['workbench', ['functions', 'sheet', 'host'], 'workbench/ is the page around the sheet engine; the pane is put in by its entry.'],
 ];
 
@@ -23,7 +24,7 @@ module.exports = {
       name: 'only-entries-choose-a-host',
       comment: 'The pane sees workbooks through host/port.ts and addresses through host/address.ts, never an adapter.',
       severity: 'error',
-      from: { path: '^src/pane/' },
+      from: { path: '^src/(pane|desk)/' },
       to: { path: '^src/host/', pathNot: '^src/host/(port|address)[.]ts$' },
     },
     {

@@ -35,7 +35,7 @@ async function start(): Promise<void> {
   provideSearcher(new WorkerSearcher('search.js'));
   registerInEngine(o_spreadsheet, FUNCTIONS, journal, () => workbook.recalculateSoon());
   leaveOutMenus(o_spreadsheet);
-  const workbook = new WorkbenchWorkbook(new o_spreadsheet.Model({}));
+  const workbook = new WorkbenchWorkbook(new o_spreadsheet.Model({}), o_spreadsheet);
   const notice = new Notice(element('notice'));
   const grid = element('grid');
   const templates = await (await fetch('vendor/o_spreadsheet.xml')).text();

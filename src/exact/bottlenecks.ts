@@ -29,9 +29,11 @@ export function bottlenecksBySearch(question: Question): Knot[] {
       const filter = new Filter(model, programme, short, seconds);
       const left = filter.run(unitsOf(programme, duties));
       const isByPriority = filter.isByPriority(left);
+      const held = filter.heldAlone(left);
       for (const part of connected(programme, columns, left)) {
         const isMixed = new Set(part.map((d) => kase.duties[d].priority)).size > 1;
-        sets.push({ duties: part, isSmallest: filter.isComplete, isByPriority: isByPriority && isMixed });
+        const short = part.reduce((sum, d) => sum + programme.need[d] - (held.get(d) ?? 0), 0);
+        sets.push({ duties: part, short, isSmallest: filter.isComplete, isByPriority: isByPriority && isMixed });
       }
     } finally {
       model.dispose();
@@ -39,13 +41,17 @@ export function bottlenecksBySearch(question: Question): Knot[] {
   }
   // A short duty that nobody is left to take is a bottleneck by itself.
   kase.duties.forEach(({ need }, d) => {
-    if (!inSome.has(d) && plan.heldOfDuty[d] < need) sets.push({ duties: [d], isSmallest: true, isByPriority: false });
+    if (!inSome.has(d) && plan.heldOfDuty[d] < need) {
+      sets.push({ duties: [d], short: need - plan.heldOfDuty[d], isSmallest: true, isByPriority: false });
+    }
   });
-  return describe(kase, programme, plan, sets);
+  return describe(kase, programme, sets);
 }
 
 interface KnotSet {
   readonly duties: readonly number[];
+  /** Seats that these duties lack where they are asked by themselves. */
+  readonly short: number;
   readonly isSmallest: boolean;
   readonly isByPriority: boolean;
 }
@@ -82,6 +88,7 @@ class Filter {
   run(units: readonly (readonly number[])[]): number[] {
     const kept = new Set(units);
     const tryWithout = (group: readonly (readonly number[])[]): void => {
+      if (!group.every((unit) => kept.has(unit))) return;
       const isAll = group.length === kept.size;
       if (!isAll) {
         for (const unit of group) kept.delete(unit);
@@ -90,7 +97,11 @@ class Filter {
       }
       if (group.length > 1) halves(group).forEach(tryWithout);
     };
-    tryWithout(units);
+    // Where urgent duties come first, leaving one out may make another one spare: so until none is.
+    for (let before = -1; before !== kept.size && this.#seconds() > 0; ) {
+      before = kept.size;
+      tryWithout([...kept]);
+    }
     return [...kept].flat().sort((a, b) => a - b);
   }
 
@@ -99,6 +110,18 @@ class Filter {
     const needed = this.#only(new Set(duties));
     const most = this.#model.bound(this.#seconds());
     return most === null || needed - most < this.#short;
+  }
+
+  /** Seats of each duty, beside Fixed ones, where these duties are asked by themselves. */
+  heldAlone(duties: readonly number[]): Map<number, number> {
+    this.#only(new Set(duties));
+    const { x } = this.#model.cover(() => Math.max(1, this.#seconds()));
+    const held = new Map<number, number>();
+    for (const i of this.#model.columns.keys()) {
+      const duty = this.#programme.duty[this.#model.columns[i]];
+      if (x[i] > 0.5) held.set(duty, (held.get(duty) ?? 0) + 1);
+    }
+    return held;
   }
 
   /** True where these duties by themselves lack as many seats; false also where that is not known in time. */
@@ -153,11 +176,10 @@ function tiesAmong({ ties }: Programme, kept: Int32Array): [number, number][] {
 function describe(
   kase: Case,
   programme: Programme,
-  plan: ReturnType<typeof planOf>,
   sets: readonly KnotSet[],
 ): Knot[] {
   const ordered = [...sets].sort((a, b) => a.duties[0] - b.duties[0]);
-  return ordered.map(({ duties, isSmallest, isByPriority }, i) => {
+  return ordered.map(({ duties, short, isSmallest, isByPriority }, i) => {
     const isIn = new Set(duties);
     const people = new Set<number>();
     programme.duty.forEach((d, column) => {
@@ -165,7 +187,6 @@ function describe(
     });
     for (const { duty, person } of kase.fixed) if (isIn.has(duty)) people.add(person);
     const needed = duties.reduce((sum, d) => sum + kase.duties[d].need, 0);
-    const places = duties.reduce((sum, d) => sum + Math.min(kase.duties[d].need, plan.heldOfDuty[d]), 0);
-    return { number: i + 1, duties, people: [...people].sort((a, b) => a - b), needed, places, isSmallest, isByPriority };
+    return { number: i + 1, duties, people: [...people].sort((a, b) => a - b), needed, places: needed - short, isSmallest, isByPriority };
   });
 }

@@ -98,11 +98,18 @@ export class Solver {
       },
     };
     this.#run(seconds, callbacks);
+    // What is asked always has an answer: where presolve says otherwise, it is tried again without.
+    if (this.#model.getModelStatus() === modelStatus.infeasible) {
+      this.#model.options.set({ presolve: 'off' });
+      this.#run(seconds, callbacks);
+      this.#model.options.set({ presolve: 'choose' });
+    }
     const status = this.#model.getModelStatus();
     const proven = status === modelStatus.optimal;
     const found = this.#model.info.get('primal_solution_status') === this.#highs.constants.solutionStatus.feasible;
     const values = found ? this.#model.getSolution().colValue : null;
-    const bound = proven ? this.#model.getObjectiveValue() : Number(this.#model.info.get('mip_dual_bound'));
+    const dual = proven ? this.#model.getObjectiveValue() : Number(this.#model.info.get('mip_dual_bound'));
+    const bound = status === modelStatus.infeasible || !Number.isFinite(dual) ? -Infinity : dual;
     return { values, bound, proven };
   }
 

@@ -1,3 +1,5 @@
+import type { Zone } from './regions';
+
 /** A cell address taken apart. */
 export interface CellAddress {
   readonly sheet: string;
@@ -38,6 +40,24 @@ export function parseCell(cell: string): { readonly column: number; readonly row
   if (match === null) return null;
   const column = Array.from(match[1].toUpperCase()).reduce((sum, letter) => sum * 26 + letter.charCodeAt(0) - 64, 0);
   return { column: column - 1, row: Number(match[2]) - 1 };
+}
+
+/** A rectangle such as `A1:D20` or one cell, ends included, from 0; null where it is none. */
+export function parseZone(cells: string): Zone | null {
+  const [from, to = from] = cells.split(':').map(parseCell);
+  if (from === null || to === null || cells.split(':').length > 2) return null;
+  return {
+    top: Math.min(from.row, to.row),
+    left: Math.min(from.column, to.column),
+    bottom: Math.max(from.row, to.row),
+    right: Math.max(from.column, to.column),
+  };
+}
+
+/** The same written again; one cell without a colon. */
+export function formatZone({ top, left, bottom, right }: Zone): string {
+  const from = `${columnLetters(left)}${top + 1}`;
+  return top === bottom && left === right ? from : `${from}:${columnLetters(right)}${bottom + 1}`;
 }
 
 function plainCell(cell: string): string {

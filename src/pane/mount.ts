@@ -6,6 +6,13 @@ import type { WorkbookPort } from '../host/port';
 import { paneModel, spokenSummary } from './model';
 import { STYLE } from './style';
 import { paneView, type Actions } from './view';
+import { CAUTION } from '../functions/caution';
+import { HandOverPanel } from './handOver/panel';
+import type { Panel } from './panel';
+import { PANEL_STYLE } from './panelStyle';
+import { PicturesPanel } from './pictures/panel';
+import { StartPanel } from './start/panel';
+import { WhatIfPanel } from './whatIf/panel';
 
 /** Recalculations within this time are drawn once, in milliseconds. */
 const CALM = 60;
@@ -18,59 +25,95 @@ const SECOND = 1000;
  * @returns a function that takes the pane away again
  */
 export function mountPane(root: HTMLElement, port: WorkbookPort, journal: Journal): () => void {
+  const pane = new Pane(port, journal);
   const style = document.createElement('style');
-  style.textContent = STYLE;
-  const pane = document.createElement('main');
-  pane.className = 'dp-pane';
-  const body = document.createElement('div');
-  const live = document.createElement('p');
-  live.className = 'dp-hidden';
-  live.setAttribute('role', 'status');
-  pane.append(body, live);
-  root.replaceChildren(style, pane);
-
-  const opened = new Set<string>();
-  let timer: ReturnType<typeof setTimeout> | undefined;
-  let refreshes = 0;
-  const actions: Actions = {
-    recalculate: () => void port.recalculate(),
-    select: (address) => void port.select(address),
-    showAll: (key) => {
-      opened.add(key);
-      draw();
-    },
-  };
-
-  const draw = (): void => {
-    const model = paneModel(journal.calls());
-    render(paneView(model, opened, actions), body);
-    const spoken = spokenSummary(model);
-    if (live.textContent !== spoken) live.textContent = spoken;
-  };
-  const refresh = async (): Promise<void> => {
-    const turn = ++refreshes;
-    // A busy host (Excel, while a cell is being edited) does not tell its formulas: then nothing is forgotten.
-    await forgetGone(port, journal).catch(() => undefined);
-    if (turn === refreshes) draw();
-  };
-  const soon = (): void => {
-    clearTimeout(timer);
-    timer = setTimeout(() => void refresh(), CALM);
-  };
-
-  // A search tells of its progress; its seconds are counted while it is under way.
-  const clock = setInterval(() => {
-    if (body.querySelector('.dp-search') !== null) draw();
-  }, SECOND);
-  const ends = [port.onRecalculated(soon), journal.onRecord(soon), onSearch(soon), () => clearInterval(clock)];
-  draw();
-  soon();
+  style.textContent = STYLE + PANEL_STYLE;
+  root.replaceChildren(style, pane.element);
+  pane.begin();
   return () => {
-    clearTimeout(timer);
-    refreshes++;
-    for (const end of ends) end();
+    pane.end();
     root.replaceChildren();
   };
+}
+
+/** The cases at a glance, and the panels below them. */
+class Pane {
+  readonly element = document.createElement('main');
+  readonly #port: WorkbookPort;
+  readonly #journal: Journal;
+  readonly #body = document.createElement('div');
+  readonly #live = document.createElement('p');
+  readonly #caution = document.createElement('p');
+  readonly #begin: StartPanel;
+  readonly #panels: readonly Panel[];
+  readonly #opened = new Set<string>();
+  readonly #ends: (() => void)[] = [];
+  #timer: ReturnType<typeof setTimeout> | undefined;
+  #refreshes = 0;
+
+  constructor(port: WorkbookPort, journal: Journal) {
+    [this.#port, this.#journal] = [port, journal];
+    this.element.className = 'dp-pane';
+    this.#live.className = 'dp-hidden';
+    this.#live.setAttribute('role', 'status');
+    this.#caution.className = 'dp-caution';
+    this.#caution.textContent = CAUTION;
+    this.#begin = new StartPanel(port, journal);
+    this.#panels = [new WhatIfPanel(port, journal), new PicturesPanel(port, journal), new HandOverPanel(port, journal), this.#begin];
+    this.element.append(this.#body, ...this.#panels.map(({ element }) => element), this.#caution, this.#live);
+  }
+
+  begin(): void {
+    const soon = (): void => {
+      clearTimeout(this.#timer);
+      this.#timer = setTimeout(() => void this.#refresh(), CALM);
+    };
+    // A search tells of its progress; its seconds are counted while it is under way.
+    const clock = setInterval(() => {
+      if (this.#body.querySelector('.dp-search') !== null) this.#draw();
+    }, SECOND);
+    this.#ends.push(this.#port.onRecalculated(soon), this.#journal.onRecord(soon), onSearch(soon), () => clearInterval(clock));
+    this.#draw();
+    soon();
+  }
+
+  end(): void {
+    clearTimeout(this.#timer);
+    this.#refreshes++;
+    for (const end of this.#ends) end();
+  }
+
+  #draw(): void {
+    const model = paneModel(this.#journal.calls());
+    const actions: Actions = {
+      recalculate: () => void this.#port.recalculate(),
+      select: (address) => void this.#port.select(address),
+      showAll: (key) => {
+        this.#opened.add(key);
+        this.#draw();
+      },
+    };
+    render(paneView(model, this.#opened, actions), this.#body);
+    const spoken = spokenSummary(model);
+    if (this.#live.textContent !== spoken) this.#live.textContent = spoken;
+  }
+
+  async #refresh(): Promise<void> {
+    const turn = ++this.#refreshes;
+    // A busy host (Excel, while a cell is being edited) does not tell its formulas: then nothing is forgotten.
+    await forgetGone(this.#port, this.#journal).catch(() => undefined);
+    if (turn !== this.#refreshes) return;
+    this.#draw();
+    // Where nothing is answered yet, to begin is what there is to do.
+    const isFirst = this.#journal.calls().length === 0;
+    const { element } = this.#begin;
+    const isOnTop = this.#body.nextSibling === element;
+    if (isFirst !== isOnTop) this.element.insertBefore(element, isFirst ? this.#body.nextSibling : this.#caution);
+    for (const panel of this.#panels) {
+      await panel.refresh();
+      if (turn !== this.#refreshes) return;
+    }
+  }
 }
 
 /** Forgets calls whose cell no longer holds a formula with that function. */

@@ -17,10 +17,6 @@ export type Opened = ReadonlySet<string>;
 /** Rows of a list shown before the rest is asked for. */
 const FIRST = 8;
 
-const CAUTION =
-  'A plan is a proposal. Rest, qualification, safeguarding and working time are governed by local rules, ' +
-  'which this tool does not know; whoever signs the plan answers for it.';
-
 /** The whole pane. Names come from cells: they are always text, never markup. */
 export function paneView(model: PaneModel, opened: Opened, actions: Actions): TemplateResult {
   const isEmpty = model.cases.length + model.strays.length === 0;
@@ -32,7 +28,6 @@ export function paneView(model: PaneModel, opened: Opened, actions: Actions): Te
     ${isEmpty ? emptyView() : nothing}
     ${repeat(model.cases, ({ id }) => id, (view) => caseView(view, opened, actions))}
     ${model.strays.length > 0 ? straysView(model.strays, actions) : nothing}
-    <p class="dp-caution">${CAUTION}</p>
   `;
 }
 
@@ -40,10 +35,7 @@ function emptyView(): TemplateResult {
   return html`
     <section class="dp-case">
       <p>Nothing has been calculated yet in this session.</p>
-      <p class="dp-soft">
-        If the workbook holds Dutyproof formulas, press Recalculate. To begin, name two ranges, one of who may take what and one of how
-        much each can take, and type <code>=DUTY.ASSIGN(Pairs, People)</code> in an empty cell.
-      </p>
+      <p class="dp-soft">If the workbook holds Dutyproof formulas, press Recalculate. Otherwise begin below.</p>
     </section>
   `;
 }
@@ -87,6 +79,7 @@ function planView(view: CaseView, opened: Opened, actions: Actions): TemplateRes
   const { id, seats, priorities, proof, short, bottlenecks, remedies, fragile } = view;
   const { needed, covered } = seats!;
   const open = needed - covered;
+  if (needed === 0) return html`<p>Nothing to cover yet: the tables name no duty that needs anyone.</p>`;
   return html`
     <p class="dp-total">
       <strong>${covered.toLocaleString('en-GB')}</strong>

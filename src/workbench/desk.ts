@@ -9,7 +9,7 @@ import { decodeText, openCsv } from './files/openCsv';
 import { openXlsx } from './files/openXlsx';
 import { makeModel } from './files/room';
 import { saveXlsx } from './files/saveXlsx';
-import { freeSheetName, isSheetName } from './files/sheetNames';
+import { freeSheetName, isSheetName } from '../host/sheetNames';
 import type { Notice } from './notice';
 
 /** What a desk works with. */

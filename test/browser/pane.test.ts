@@ -42,7 +42,7 @@ describe('the pane', () => {
 
   it('keeps the focus and what is opened when the sheet is recalculated', async () => {
     const page = await openWorkbench('light');
-    await page.locator('#pane summary').last().click();
+    await page.locator('#pane summary', { hasText: 'Where it answers' }).click();
     await page.locator('#pane').getByRole('button', { name: 'ASSIGN' }).focus();
     await page.evaluate(() => {
       const { model } = window.dutyproof!.workbook;
@@ -52,7 +52,7 @@ describe('the pane', () => {
     const focused = await page.evaluate(() => document.querySelector('#pane')!.shadowRoot!.activeElement?.textContent);
     expect(focused).toContain('ASSIGN');
     expect(await page.locator('#pane').getByRole('button', { name: 'GRID' }).isVisible()).toBe(true);
-    expect(await page.locator('#pane [role=status]').textContent()).toBe('Recalculated: 1 seat uncovered.');
+    expect(await page.locator('#pane .dp-hidden[role=status]').textContent()).toBe('Recalculated: 1 seat uncovered.');
     await page.close();
   });
 

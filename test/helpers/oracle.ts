@@ -257,7 +257,10 @@ async function optimise(
     ` ${programme.free.map((_, i) => `x${i}`).join(' ')}`,
     'End',
   ].join('\n');
-  const result = highs.solve(text, { mip_rel_gap: 0, mip_abs_gap: 0 });
+  const ask = (presolve: 'choose' | 'off') => highs.solve(text, { mip_rel_gap: 0, mip_abs_gap: 0, presolve });
+  // Earlier rows hold by the plan that gave them, so there is an answer; presolve has been seen to say otherwise.
+  const first = ask('choose');
+  const result = first.Status === 'Infeasible' ? ask('off') : first;
   if (result.Status !== 'Optimal') throw new Error(`HiGHS answers ${result.Status} for\n${text}`);
   return Math.round(result.ObjectiveValue);
 }

@@ -7,13 +7,13 @@ import { describeWorkbookPort } from './contract';
 
 describeWorkbookPort('the workbook in memory', () => {
   const port = new MemoryWorkbook();
-  return { port, write: (address, formula) => port.write(address, formula), selected: () => port.selected };
+  return { port, write: (address, formula) => port.type(address, formula), selected: () => port.selected };
 });
 
 describeWorkbookPort('the workbench', () => {
   const model = new engine.Model({});
   return {
-    port: new WorkbenchWorkbook(model),
+    port: new WorkbenchWorkbook(model, engine),
     write: (address, formula) => {
       const { column, row } = parseCell(parseAddress(address)!.cell)!;
       const sheetId = model.getters.getSheetIdByName('Sheet1')!;

@@ -134,7 +134,7 @@ describe('A1#', () => {
 
 describe('the workbook port of the workbench', () => {
   it('tells of one change once, and again of the workbook that takes the place of another', async () => {
-    const port = new WorkbenchWorkbook(model);
+    const port = new WorkbenchWorkbook(model, engine);
     let told = 0;
     port.onRecalculated(() => told++);
     type('A1', 'x');
@@ -154,7 +154,7 @@ describe('the workbook port of the workbench', () => {
   it('brings a cell of a hidden sheet into view', async () => {
     const sheetId = model.getters.getSheetIdByName("O'Neil")!;
     model.dispatch('HIDE_SHEET', { sheetId });
-    await new WorkbenchWorkbook(model).select("'O''Neil'!B2");
+    await new WorkbenchWorkbook(model, engine).select("'O''Neil'!B2");
     expect(model.getters.getActivePosition()).toEqual({ sheetId, col: 1, row: 1 });
     expect(model.getters.isSheetVisible(sheetId)).toBe(true);
   });

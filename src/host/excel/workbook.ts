@@ -1,9 +1,11 @@
 import { parseAddress } from '../address';
-import type { WorkbookPort } from '../port';
+import type { Block, DraftCell, OurCell, SheetDraft, WorkbookPort } from '../port';
+import { ExcelTables } from './tables';
 
 /** The pane's view of a workbook in Excel. Asks only for what the Excel at hand supports. */
 export class ExcelWorkbook implements WorkbookPort {
   readonly kind = 'excel';
+  readonly #tables = new ExcelTables();
 
   onRecalculated(listener: () => void): () => void {
     let ended = false;
@@ -73,6 +75,64 @@ export class ExcelWorkbook implements WorkbookPort {
       context.workbook.application.calculate(Excel.CalculationType.full);
       await context.sync();
     }).catch(() => undefined);
+  }
+
+  sheetNames(): Promise<readonly string[]> {
+    return this.#tables.sheetNames();
+  }
+
+  selection(): Promise<Block | null> {
+    return this.#tables.selection();
+  }
+
+  onSelected(listener: (address: string) => void): () => void {
+    let isEnded = false;
+    let end: (() => Promise<void>) | null = null;
+    void Excel.run(async (context) => {
+      if (!supports('1.7')) return;
+      const handler = context.workbook.onSelectionChanged.add(async () => {
+        if (isEnded) return;
+        await Excel.run(async (inner) => {
+          const cell = inner.workbook.getActiveCell().load('address');
+          await inner.sync();
+          if (!isEnded) listener(cell.address);
+        }).catch(() => undefined);
+      });
+      await context.sync();
+      end = async () => {
+        handler.remove();
+        await handler.context.sync();
+      };
+      if (isEnded) await end();
+    }).catch(() => undefined);
+    return () => {
+      isEnded = true;
+      void end?.().catch(() => undefined);
+    };
+  }
+
+  blocks(): Promise<readonly Block[]> {
+    return this.#tables.blocks();
+  }
+
+  read(reference: string): Promise<Block | null> {
+    return this.#tables.read(reference);
+  }
+
+  write(address: string, cells: readonly (readonly DraftCell[])[]): Promise<void> {
+    return this.#tables.write(address, cells);
+  }
+
+  appendRow(reference: string, cells: readonly DraftCell[]): Promise<string | null> {
+    return this.#tables.appendRow(reference, cells);
+  }
+
+  addSheets(drafts: readonly SheetDraft[]): Promise<readonly string[]> {
+    return this.#tables.addSheets(drafts);
+  }
+
+  ourCells(): Promise<readonly OurCell[]> {
+    return this.#tables.ourCells();
   }
 }
 

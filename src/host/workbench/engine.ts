@@ -4,6 +4,8 @@
  * published; this is all that our code knows of it.
  */
 
+import type { EngineAlarm } from './alarms';
+
 /** A cell as functions get and give it. */
 export interface EngineCell {
   readonly value: unknown;
@@ -92,6 +94,9 @@ export interface EngineGetters {
   /** What a formula would come to in a cell. */
   evaluateFormulaResult(sheetId: string, formula: string, origin: EnginePosition): EngineCell | readonly (readonly EngineCell[])[];
   getRangeFromZone(sheetId: string, zone: EngineZone): unknown;
+  getRangeDataFromZone(sheetId: string, zone: EngineZone): unknown;
+  getLocale(): EngineLocale;
+  getNamedRanges(): readonly { readonly name: string; readonly range: { readonly sheetId: string; readonly zone: EngineZone } }[];
 }
 
 /** A change, or something asked of the page; only the former can be undone. */
@@ -106,7 +111,9 @@ export interface EngineModel {
   dispatch(command: string, payload?: object): { readonly isSuccessful: boolean };
   exportData(): EngineData;
   on(type: 'command-dispatched', owner: object, callback: (command: EngineCommand) => void): void;
-  off(type: 'command-dispatched', owner: object): void;
+  /** Whatever may change what is drawn, a selection too. */
+  on(type: 'update', owner: object, callback: () => void): void;
+  off(type: 'command-dispatched' | 'update', owner: object): void;
 }
 
 /** A workbook as the engine loads and exports it. */
@@ -147,6 +154,7 @@ export interface EngineSheet {
   readonly cols: Readonly<Record<string, EngineHeader>>;
   readonly rows: Readonly<Record<string, EngineHeader>>;
   readonly merges: readonly string[];
+  readonly conditionalFormats?: readonly EngineAlarm[];
   readonly isVisible: boolean;
   readonly areGridLinesVisible?: boolean;
   readonly color?: string;
@@ -186,12 +194,15 @@ export interface EngineStyle {
 export interface Engine {
   readonly Model: new (data: object, config?: object) => EngineModel;
   readonly Spreadsheet: unknown;
+  /** What a part of the engine is made from that handles commands. */
+  readonly UIPlugin: new (...args: never[]) => { dispatch(command: string, payload: object): unknown };
   readonly registries: {
     readonly functionRegistry: {
       add(name: string, fn: EngineFunction): void;
       replace(name: string, fn: EngineFunction): void;
       contains(name: string): boolean;
     };
+    readonly featurePluginRegistry: { replace(name: string, plugin: unknown): void };
     readonly errorTypes: Set<string>;
     readonly cellMenuRegistry: EngineRegistry;
     readonly rowMenuRegistry: EngineRegistry;

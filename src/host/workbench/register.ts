@@ -3,6 +3,7 @@ import { invoke } from '../../functions/invoke';
 import type { Journal } from '../../functions/journal';
 import { NAMESPACE } from '../../functions/registry';
 import { columnLetters, formatAddress } from '../address';
+import { registerBulk } from './bulk';
 import { CYCLE, fromSpill, isCell, toRange } from './cells';
 import type { Engine, EngineArgument, EngineCell, EngineContext, EngineFunction } from './engine';
 import { spilledRange } from './spilledRange';
@@ -20,6 +21,7 @@ export function registerInEngine(engine: Engine, functions: readonly CellFunctio
   for (const code of FURTHER_ERRORS) errorTypes.add(code);
   for (const fn of functions) functionRegistry.replace(`${NAMESPACE}.${fn.id}`, describe(fn, journal, errorTypes, recalculate));
   functionRegistry.replace('SPILLED.RANGE', spilledRange(errorTypes));
+  registerBulk(engine);
 }
 
 function describe(fn: CellFunction, journal: Journal, codes: ReadonlySet<string>, recalculate: () => void): EngineFunction {

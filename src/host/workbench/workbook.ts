@@ -1,17 +1,22 @@
-import { parseAddress, parseCell } from '../address';
-import type { WorkbookPort } from '../port';
-import type { EngineModel, EnginePosition } from './engine';
+import { columnLetters, formatAddress, parseAddress, parseCell } from '../address';
+import type { Block, DraftCell, OurCell, SheetDraft, WorkbookPort } from '../port';
+import type { Engine, EngineModel, EnginePosition } from './engine';
+import { EngineTables } from './tables';
 
 /** The pane's view of the workbook in the workbench. The model changes when another file is opened. */
 export class WorkbenchWorkbook implements WorkbookPort {
   readonly kind = 'workbench';
   #model: EngineModel;
+  readonly #engine: Engine;
+  readonly #selectListeners = new Set<(address: string) => void>();
+  #selected = '';
   readonly #listeners = new Set<() => void>();
   #isTold = true;
   #isDue = false;
 
-  constructor(model: EngineModel) {
+  constructor(model: EngineModel, engine: Engine) {
     this.#model = model;
+    this.#engine = engine;
     this.#listen();
   }
 
@@ -22,6 +27,7 @@ export class WorkbenchWorkbook implements WorkbookPort {
   /** Takes another workbook in place of this one. */
   replace(model: EngineModel): void {
     this.#model.off('command-dispatched', this);
+    this.#model.off('update', this);
     this.#model = model;
     this.#listen();
     this.#tellSoon();
@@ -72,6 +78,58 @@ export class WorkbenchWorkbook implements WorkbookPort {
     return Promise.resolve();
   }
 
+  sheetNames(): Promise<readonly string[]> {
+    const { getters } = this.#model;
+    return Promise.resolve(getters.getSheetIds().map((id) => getters.getSheetName(id)));
+  }
+
+  selection(): Promise<Block | null> {
+    return Promise.resolve(this.#tables.selection());
+  }
+
+  onSelected(listener: (address: string) => void): () => void {
+    this.#selectListeners.add(listener);
+    return () => this.#selectListeners.delete(listener);
+  }
+
+  blocks(): Promise<readonly Block[]> {
+    return Promise.resolve(this.#tables.blocks());
+  }
+
+  read(reference: string): Promise<Block | null> {
+    return Promise.resolve(this.#tables.read(reference));
+  }
+
+  write(address: string, cells: readonly (readonly DraftCell[])[]): Promise<void> {
+    this.#tables.write(address, cells);
+    return Promise.resolve();
+  }
+
+  appendRow(reference: string, cells: readonly DraftCell[]): Promise<string | null> {
+    return Promise.resolve(this.#tables.appendRow(reference, cells));
+  }
+
+  addSheets(drafts: readonly SheetDraft[]): Promise<readonly string[]> {
+    return Promise.resolve(this.#tables.addSheets(drafts));
+  }
+
+  ourCells(): Promise<readonly OurCell[]> {
+    return Promise.resolve(this.#tables.ourCells());
+  }
+
+  get #tables(): EngineTables {
+    return new EngineTables(this.#model, this.#engine);
+  }
+
+  #tellSelection(): void {
+    const { getters } = this.#model;
+    const { sheetId, col, row } = getters.getActivePosition();
+    const address = formatAddress({ sheet: getters.getSheetName(sheetId), cell: `${columnLetters(col)}${row + 1}` });
+    if (address === this.#selected) return;
+    this.#selected = address;
+    for (const listener of [...this.#selectListeners]) listener(address);
+  }
+
   /** Null for a cell that is not there. */
   #position(address: string): EnginePosition | null {
     const { getters } = this.#model;
@@ -85,6 +143,7 @@ export class WorkbenchWorkbook implements WorkbookPort {
 
   #listen(): void {
     this.#model.on('command-dispatched', this, () => this.#tellSoon());
+    this.#model.on('update', this, () => this.#tellSelection());
   }
 
   /** One change is many commands, and the calculation comes after them: listeners are told once, when all is done. */

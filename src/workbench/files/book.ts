@@ -40,6 +40,8 @@ export interface BookSheet {
   readonly gridLines?: boolean;
   /** Colour of the tab as `#rrggbb`. */
   readonly tabColour?: string;
+  /** Cells drawn as an alarm while their text says that something is wrong. */
+  readonly alarms?: readonly string[];
   /** Merged ranges as `A1:B2`. */
   readonly merges: readonly string[];
   /** Rows and columns that stay in view. */

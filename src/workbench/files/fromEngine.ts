@@ -1,3 +1,4 @@
+import { alarmCells } from '../../host/workbench/alarms';
 import { columnLetters, parseCell } from '../../host/address';
 import { usualCode } from '../../host/workbench/cells';
 import type {
@@ -42,6 +43,7 @@ function fromEngineSheet(sheet: EngineSheet, data: EngineData, model: EngineMode
     hiddenRows: hidden(rows),
     gridLines: sheet.areGridLinesVisible !== false,
     ...given({ tabColour: sheet.color?.toLowerCase() }),
+    alarms: alarmCells(sheet.conditionalFormats),
     merges: sheet.merges,
     frozen: { rows: sheet.panes?.ySplit ?? 0, columns: sheet.panes?.xSplit ?? 0 },
   };

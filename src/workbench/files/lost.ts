@@ -1,4 +1,5 @@
 import type { Sheet, Workbook } from 'hucre';
+import { isAlarm } from './alarms';
 
 /** Parts of a file, by where they lie in it, that the workbench cannot carry over. */
 const PARTS: readonly (readonly [RegExp, string])[] = [
@@ -20,7 +21,7 @@ const PARTS: readonly (readonly [RegExp, string])[] = [
 const FEATURES: readonly (readonly [string, (sheet: Sheet) => boolean])[] = [
   ['tables as such (their ranges stay, under their names)', ({ tables }) => holds(tables)],
   ['filters', ({ autoFilter, tables }) => autoFilter !== undefined && !holds(tables)],
-  ['conditional formats', ({ conditionalRules }) => holds(conditionalRules)],
+  ['conditional formats', ({ conditionalRules }) => holds(conditionalRules?.filter((rule) => !isAlarm(rule)))],
   ['input checks (data validation)', ({ dataValidations }) => holds(dataValidations)],
   ['sheet protection', ({ protection }) => protection?.sheet === true],
   ['sparklines', ({ sparklines }) => holds(sparklines)],

@@ -1,6 +1,6 @@
 import Papa from 'papaparse';
 import type { BookCell, BookSheet } from './book';
-import { freeSheetName } from './sheetNames';
+import { freeSheetName } from '../../host/sheetNames';
 
 /** A number as people write it in such files; "001" and "1,5" stay text. */
 const NUMBER = /^-?(0|[1-9]\d{0,14})(\.\d+)?$/u;

@@ -5,6 +5,7 @@ import { lostParts } from './lost';
 import { sharedFormulas } from './sharedFormulas';
 import { toTyped } from './spelling';
 import { tableNames, withoutTables, type FileTable } from './structured';
+import { isAlarm } from './alarms';
 import { given, readColour, readStyle } from './styles';
 
 /** Pixels of a column as wide as one digit, near enough for the usual fonts. */
@@ -99,11 +100,18 @@ function readSheet(sheet: Sheet, surroundings: Surroundings): BookSheet {
     hiddenRows: rows.flatMap(([row, { hidden }]) => (hidden === true ? [row] : [])),
     gridLines: sheet.view?.showGridLines !== false,
     ...given({ tabColour: readColour(sheet.view?.tabColor, surroundings.theme) }),
+    ...given({ alarms: alarmsOf(sheet) }),
     merges: (sheet.merges ?? []).map(
       ({ startRow, startCol, endRow, endCol }) => `${columnLetters(startCol)}${startRow + 1}:${columnLetters(endCol)}${endRow + 1}`,
     ),
     frozen: { rows: sheet.freezePane?.rows ?? 0, columns: sheet.freezePane?.columns ?? 0 },
   };
+}
+
+/** The cells that are alarms; undefined where there are none. */
+function alarmsOf({ conditionalRules = [] }: Sheet): string[] | undefined {
+  const cells = conditionalRules.filter(isAlarm).map(({ range }) => range);
+  return cells.length === 0 ? undefined : cells;
 }
 
 /** Sizes in whole pixels, where there are any. */

@@ -1,5 +1,6 @@
 import { writeXlsx, type Cell, type CellValue, type ColumnDef, type RowDef, type WriteSheet } from 'hucre';
 import { columnLetters, parseCell } from '../../host/address';
+import { alarmRules } from './alarms';
 import type { Book, BookCell, BookSheet } from './book';
 import { isArrayFormula, toStored } from './spelling';
 import { given, writeColour, writeStyle } from './styles';
@@ -50,6 +51,7 @@ function writeSheet(sheet: BookSheet): WriteSheet {
     },
     ...(sheet.frozen.rows + sheet.frozen.columns > 0 ? { freezePane: sheet.frozen } : {}),
     ...(sheet.hidden ? { hidden: true } : {}),
+    ...(sheet.alarms === undefined || sheet.alarms.length === 0 ? {} : { conditionalRules: alarmRules(sheet.alarms) }),
   };
 }
 

@@ -1,6 +1,8 @@
 import { columnLetters } from '../../host/address';
+import { loadedAlarms } from '../../host/workbench/alarms';
+import { literal } from '../../host/workbench/literal';
 import type { Engine, EngineBorder, EngineData, EngineHeader, EngineLocale, EngineSheet, EngineStyle } from '../../host/workbench/engine';
-import type { Book, BookCell, BookSheet, BookStyle } from './book';
+import type { Book, BookSheet, BookStyle } from './book';
 import { formatTable, type FormatTable } from './formats';
 import { given } from './styles';
 
@@ -85,7 +87,7 @@ function toEngineSheet(
   let colNumber = 0;
   for (const cell of sheet.cells) {
     const place = `${columnLetters(cell.column)}${cell.row + 1}`;
-    const content = cell.formula ?? literal(cell, engine);
+    const content = cell.formula ?? (cell.isError === true ? String(cell.value) : literal(cell.value, engine, LOCALE));
     if (content !== '') cells[place] = content;
     const { border, ...style } = toEngineStyle(cell.style ?? {});
     if (Object.keys(style).length > 0) looks.styles[place] = numbered.styles.number(style);
@@ -105,6 +107,7 @@ function toEngineSheet(
     cols: headers(sheet.widths, sheet.hiddenColumns),
     rows: headers(sheet.heights, sheet.hiddenRows),
     merges: sheet.merges,
+    conditionalFormats: loadedAlarms(sheet.alarms ?? []),
     isVisible: !sheet.hidden,
     areGridLinesVisible: sheet.gridLines !== false,
     ...given({ color: sheet.tabColour }),
@@ -117,21 +120,6 @@ function headers(sizes: ReadonlyMap<number, number> = new Map(), hidden: readonl
   for (const [at, size] of sizes) table[at] = { size };
   for (const at of hidden) table[at] = { ...table[at], isHidden: true };
   return table;
-}
-
-/** A value as it would be typed; text that would be read as something else gets an apostrophe before it. */
-function literal({ value, isError }: BookCell, { helpers }: Engine): string {
-  if (value === null) return '';
-  if (typeof value === 'boolean') return value ? 'TRUE' : 'FALSE';
-  if (typeof value === 'number') return String(value);
-  if (isError === true) return value;
-  const text = value.trim();
-  const isMisread =
-    /^['=+\-@#]/u.test(value) ||
-    /^(?:true|false)$/iu.test(text) ||
-    helpers.isNumber(text, LOCALE) ||
-    helpers.isDateTime(text, LOCALE);
-  return isMisread ? `'${value}` : value;
 }
 
 function toEngineStyle({ colour, fill, size, wrap, vertical, border, ...rest }: BookStyle): EngineStyle & { border?: EngineBorder } {

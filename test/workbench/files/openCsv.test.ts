@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { decodeText, openCsv } from '../../../src/workbench/files/openCsv';
-import { freeSheetName, isSheetName } from '../../../src/workbench/files/sheetNames';
+import { freeSheetName, isSheetName } from '../../../src/host/sheetNames';
 
 describe('text files', () => {
   it.each([

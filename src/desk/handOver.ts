@@ -1,0 +1,95 @@
+import { CAUTION } from '../functions/caution';
+import { proofWords } from '../functions/proofWords';
+import { FUNCTIONS } from '../functions/registry';
+import type { Solved } from '../functions/solved';
+import type { DraftCell, SheetDraft } from '../host/port';
+import { checkSheet, NONE, type CheckSheet } from './handOverCheck';
+
+/**
+ * Sheets of plain values that can be sent to people without the add-in: what was decided, by duty and
+ * by person, what stays uncovered and why, the moves since the last plan, and a block of native
+ * formulas that finds fault with the plan if someone changes it into an error.
+ *
+ * @param day the day of the handing over, as it is to stand there
+ * @param prefix before every name of a range, so that none is taken twice
+ * @throws like the functions it asks: Busy, Refusal, InputFault
+ */
+export function handOverSheets(solved: Solved, day: string, prefix: string): SheetDraft[] {
+  const kase = solved.case;
+  const plan = planSheet(solved, prefix);
+  const check = checkSheet(solved, prefix);
+  const moves = kase.current === null ? [] : [listSheet(solved, 'STEPS', 'Moves', [6, 30, 24, 24, 30])];
+  return [
+    coverSheet(solved, day, check),
+    plan,
+    peopleSheet(solved),
+    listSheet(solved, 'UNCOVERED', 'Uncovered', [30, 8, 8, 9, 11, 90]),
+    ...moves,
+    check.sheet,
+  ];
+}
+
+/** What a function spills, as plain rows. */
+function spilled(solved: Solved, id: string): (string | number | null)[][] {
+  const fn = FUNCTIONS.find((one) => one.id === id);
+  if (fn === undefined || !('ofCase' in fn)) throw new Error(`no function ${id} of a case`);
+  return fn.ofCase(solved).map((row) => row.map((cell) => (cell === '' ? null : typeof cell === 'boolean' ? String(cell) : cell)));
+}
+
+function listSheet(solved: Solved, id: string, name: string, widths: number[]): SheetDraft {
+  return { name, rows: spilled(solved, id), headingRows: [0], widths };
+}
+
+function coverSheet(solved: Solved, day: string, { verdict }: CheckSheet): SheetDraft {
+  const { plan, method } = solved.outcome;
+  const rows: DraftCell[][] = [
+    ['The plan, handed over'],
+    ['Date', day],
+    ['Fingerprint of the case', solved.fingerprint],
+    ['Seats needed', plan.needed],
+    ['Seats covered', plan.covered],
+    ['Seats uncovered', plan.needed - plan.covered],
+    ['How it was found', method],
+    ['How good it is', proofWords(solved.outcome)],
+    ['Check', { formula: verdict }],
+    [null],
+    ['Signed by', null],
+    [null],
+    [CAUTION],
+    ['The plan was made from the tables as they stood on the date above. It is plain text and numbers; only the check is calculated.'],
+  ];
+  return { name: 'Handed over', rows, titleRows: [0], widths: [26, 60], alarms: ['B9'] };
+}
+
+/** A row a seat: duty, person, slot and group, load where loads are used, and the note. */
+function planSheet(solved: Solved, prefix: string): SheetDraft {
+  const kase = solved.case;
+  const byName = new Map(kase.duties.map((duty) => [duty.name, duty]));
+  const label = (keys: readonly string[]): string => (keys.length === 0 ? NONE : (kase.labelNames.get(keys[0]) ?? keys[0]));
+  // Where there are no seats at all, the answer is a sentence.
+  const rows = spilled(solved, 'ASSIGN').slice(1).filter(([duty]) => byName.has(String(duty)));
+  const body = rows.map(([duty, person, , note]): DraftCell[] => {
+    const entry = byName.get(String(duty));
+    return [duty, person, label(entry?.slots ?? []), label(entry?.groups ?? []), entry?.load ?? 0, note];
+  });
+  const last = Math.max(1, body.length) + 1;
+  const names = ['PlanDuty', 'PlanPerson', 'PlanSlot', 'PlanGroup', 'PlanLoad'];
+  return {
+    name: 'Plan by duty',
+    rows: [['Duty', 'Person', 'Slot', 'Group', 'Load', 'Note'], ...body],
+    headingRows: [0],
+    widths: [30, 24, 14, 14, 6, 14],
+    names: names.map((name, i) => ({ name: prefix + name, cells: `${'ABCDE'[i]}2:${'ABCDE'[i]}${last}` })),
+  };
+}
+
+function peopleSheet(solved: Solved): SheetDraft {
+  const kase = solved.case;
+  const { plan } = solved.outcome;
+  const own: string[][] = kase.people.map(() => []);
+  for (const { duty, person } of [...plan.seats].sort((a, b) => a.duty - b.duty)) own[person].push(kase.duties[duty].name);
+  const most = Math.max(1, ...own.map((duties) => duties.length));
+  const headings = ['Person', 'Seats', ...Array.from({ length: most }, (_, i) => `Duty ${i + 1}`)];
+  const rows = kase.people.map(({ name }, p): DraftCell[] => [name, plan.heldByPerson[p], ...own[p]]);
+  return { name: 'Plan by person', rows: [headings, ...rows], headingRows: [0], widths: [24, 7, ...Array.from({ length: most }, () => 26)] };
+}

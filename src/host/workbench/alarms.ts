@@ -1,0 +1,39 @@
+import { formatZone, parseZone } from '../address';
+import { ALARM } from '../port';
+import type { BulkStep } from './bulk';
+import type { EngineGetters } from './engine';
+
+/** A conditional format as the engine keeps it. */
+export interface EngineAlarm {
+  readonly id: string;
+  readonly ranges: readonly string[];
+  readonly rule: object;
+}
+
+const RULE = {
+  type: 'CellIsRule',
+  operator: 'beginsWithText',
+  values: [ALARM],
+  style: { fillColor: '#fbe9df', textColor: '#9c3b12', bold: true },
+};
+
+/** The step that makes a cell an alarm. */
+export function alarmStep(getters: EngineGetters, sheetId: string, cell: string): BulkStep {
+  const range = getters.getRangeDataFromZone(sheetId, parseZone(cell)!);
+  return { command: 'ADD_CONDITIONAL_FORMAT', payload: { sheetId, ranges: [range], cf: { id: crypto.randomUUID(), rule: RULE } } };
+}
+
+/** The same for a sheet that is loaded. */
+export function loadedAlarms(cells: readonly string[]): EngineAlarm[] {
+  return cells.map((cell, i) => ({ id: `alarm${i + 1}`, ranges: [cell], rule: RULE }));
+}
+
+/** The cells of a sheet that are alarms, such as `B9`. */
+export function alarmCells(formats: readonly EngineAlarm[] = []): string[] {
+  return formats.filter(({ rule }) => 'values' in rule && Array.isArray(rule.values) && rule.values[0] === ALARM).flatMap(({ ranges }) => ranges.map(plain));
+}
+
+function plain(range: string): string {
+  const zone = parseZone(range.slice(range.lastIndexOf('!') + 1).replaceAll('$', ''));
+  return zone === null ? range : formatZone(zone);
+}

@@ -1,0 +1,87 @@
+import { html, nothing, type TemplateResult } from 'lit-html';
+import { handOverSheets } from '../../desk/handOver';
+import { lostFormulas, makeLive, makePlain, plainState, repair } from '../../desk/plain';
+import type { Journal } from '../../functions/journal';
+import { formatAddress } from '../../host/address';
+import type { WorkbookPort } from '../../host/port';
+import { counted } from '../model';
+import { liveCases, Panel } from '../panel';
+
+/** Handing a plan over as plain sheets, making formulas plain and live again, and mending lost ones. */
+export class HandOverPanel extends Panel {
+  #live: readonly string[] = [];
+  #plain: readonly string[] = [];
+  #lost = 0;
+
+  constructor(port: WorkbookPort, journal: Journal) {
+    super('Hand over', port, journal);
+  }
+
+  protected override async look(): Promise<void> {
+    const { live, plain } = await plainState(this.port);
+    [this.#live, this.#plain] = [live, plain];
+    this.#lost = (await lostFormulas(this.port)).length;
+  }
+
+  protected override view(): TemplateResult {
+    const hasPlan = liveCases(this.journal).length > 0;
+    this.element.hidden = !hasPlan && this.#plain.length === 0 && this.#lost === 0;
+    return html`
+      <h2>Hand over</h2>
+      ${hasPlan ? this.#handOverView() : nothing} ${this.#lost === 0 ? nothing : this.#lostView()}
+      ${this.#live.length + this.#plain.length === 0 ? nothing : this.#plainView()}
+    `;
+  }
+
+  #handOverView(): TemplateResult {
+    return html`
+      <p class="dp-soft">
+        New sheets of plain values that anyone can open: the plan by duty and by person, what is uncovered and why, and a check that says
+        so if someone changes the plan into an error.
+      </p>
+      ${this.button('Make the sheets to hand over', () => this.#handOver())}
+    `;
+  }
+
+  #lostView(): TemplateResult {
+    return html`
+      <p>The spreadsheet has lost ${counted(this.#lost, 'formula', 'formulas')}.</p>
+      ${this.button('Enter them anew', async () => `Entered ${counted(await repair(this.port), 'formula', 'formulas')} anew.`)}
+    `;
+  }
+
+  #plainView(): TemplateResult {
+    const replaced = async (sheet: string): Promise<string> =>
+      `${counted(await makePlain(this.port, sheet), 'formula', 'formulas')} on ${sheet} replaced by values.`;
+    const putBack = async (sheet: string): Promise<string> =>
+      `${counted(await makeLive(this.port, sheet), 'formula', 'formulas')} put back on ${sheet}.`;
+    return html`
+      <details>
+        <summary>Formulas and plain values</summary>
+        <div class="dp-cells">
+          ${this.#live.map((sheet) => this.button(`Make ${sheet} plain`, () => replaced(sheet)))}
+          ${this.#plain.map((sheet) => this.button(`Make ${sheet} live again`, () => putBack(sheet)))}
+        </div>
+      </details>
+    `;
+  }
+
+  async #handOver(): Promise<string> {
+    const [first] = liveCases(this.journal);
+    const names = await this.port.addSheets(handOverSheets(first.solved, today(), await freePrefix(this.port)));
+    await this.port.select(formatAddress({ sheet: names[0], cell: 'A1' }));
+    return `Made ${counted(names.length, 'sheet', 'sheets')}: ${names.join(', ')}. To send them, save a copy of the workbook with only these.`;
+  }
+}
+
+function today(): string {
+  return new Date().toLocaleDateString('en-GB', { day: 'numeric', month: 'long', year: 'numeric' });
+}
+
+/** A prefix for the names of ranges that no earlier handing over has taken. */
+async function freePrefix(port: WorkbookPort): Promise<string> {
+  for (let number = 1; ; number++) {
+    const prefix = `Handed${number === 1 ? '' : `${number}_`}`;
+    if ((await port.read(`${prefix}PlanDuty`)) === null) return prefix;
+  }
+}

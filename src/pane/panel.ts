@@ -1,0 +1,95 @@
+import { html, render, type TemplateResult } from 'lit-html';
+import type { Journal } from '../functions/journal';
+import { Busy } from '../functions/searches';
+import type { Solved } from '../functions/solved';
+import type { WorkbookPort } from '../host/port';
+
+/** A part of the pane that draws itself, looks at the workbook and acts on it. */
+export abstract class Panel {
+  readonly element: HTMLElement;
+  protected readonly port: WorkbookPort;
+  protected readonly journal: Journal;
+  /** True while an action is carried out; its buttons wait. */
+  protected isBusy = false;
+  #said = '';
+
+  constructor(title: string, port: WorkbookPort, journal: Journal) {
+    this.port = port;
+    this.journal = journal;
+    this.element = document.createElement('section');
+    this.element.className = 'dp-case';
+    this.element.setAttribute('aria-label', title);
+  }
+
+  /** Looks at the workbook and draws anew; called after every recalculation. */
+  async refresh(): Promise<void> {
+    // A busy host (Excel, while a cell is being edited) tells nothing: what is drawn stays.
+    await this.look().catch(() => undefined);
+    this.draw();
+  }
+
+  /** Reads what the view needs and the journal does not tell. */
+  protected look(): Promise<void> {
+    return Promise.resolve();
+  }
+
+  protected abstract view(): TemplateResult;
+
+  protected draw(): void {
+    render(html`${this.view()}<p role="status" class="dp-said" dir="auto">${this.#said}</p>`, this.element);
+  }
+
+  /** A handler that carries a step out, one at a time, and says how it went. */
+  protected act(step: () => Promise<string>): () => Promise<void> {
+    return async () => {
+      if (this.isBusy) return;
+      this.isBusy = true;
+      this.#said = 'Working …';
+      this.draw();
+      try {
+        this.#said = await step();
+      } catch (error) {
+        this.#said = error instanceof Busy ? 'An answer is still being searched for. Press again when it is there.' : inWords(error);
+      }
+      this.isBusy = false;
+      await this.refresh();
+    };
+  }
+
+  protected button(label: string, step: () => Promise<string>): TemplateResult {
+    return html`<button type="button" ?disabled=${this.isBusy} @click=${this.act(step)}><bdi>${label}</bdi></button>`;
+  }
+}
+
+/** A case whose plan is at hand, with the cell its first formula stands in. */
+export interface LiveCase {
+  readonly solved: Solved;
+  readonly address: string;
+}
+
+/** The cases alive in the workbook whose plan is known, by the address of their first cell. */
+export function liveCases(journal: Journal): LiveCase[] {
+  const found = new Map<Solved, string>();
+  for (const { solved, address } of journal.calls()) {
+    if (solved === null || !hasPlan(solved)) continue;
+    const known = found.get(solved);
+    if (known === undefined || compare(address, known) < 0) found.set(solved, address);
+  }
+  return [...found].map(([solved, address]) => ({ solved, address })).sort((a, b) => compare(a.address, b.address));
+}
+
+function compare(one: string, other: string): number {
+  return one.localeCompare(other, 'en', { numeric: true });
+}
+
+function hasPlan(solved: Solved): boolean {
+  try {
+    return solved.isAtHand('plan') && solved.outcome.plan.needed >= 0;
+  } catch {
+    return false;
+  }
+}
+
+function inWords(error: unknown): string {
+  return error instanceof Error ? error.message : String(error);
+}
