@@ -56,8 +56,9 @@ export abstract class Panel {
     };
   }
 
+  /** A button that waits while another action is carried out; disabled it would lose the focus. */
   protected button(label: string, step: () => Promise<string>): TemplateResult {
-    return html`<button type="button" ?disabled=${this.isBusy} @click=${this.act(step)}><bdi>${label}</bdi></button>`;
+    return html`<button type="button" aria-disabled=${this.isBusy ? 'true' : 'false'} @click=${this.act(step)}><bdi>${label}</bdi></button>`;
   }
 }
 

@@ -46,6 +46,8 @@ export class DeskPage {
   /** Types into a cell, key by key. */
   async type(address: string, text: string): Promise<void> {
     await this.select(address);
+    // A click on the cell would bring the keys here too.
+    await this.page.locator('.o-grid .o-composer').focus();
     await this.page.keyboard.type(text, { delay: 15 });
     await this.page.keyboard.press('Enter');
   }
