@@ -25,7 +25,7 @@ module.exports = {
       comment: 'The pane sees workbooks through host/port.ts and addresses through host/address.ts, never an adapter.',
       severity: 'error',
       from: { path: '^src/(pane|desk)/' },
-      to: { path: '^src/host/', pathNot: '^src/host/(port|address)[.]ts$' },
+      to: { path: '^src/host/', pathNot: '^src/host/(port|address|regions)[.]ts$' },
     },
     {
       name: 'no-engine-in-excel',

@@ -38,22 +38,29 @@ export async function makeLive(port: WorkbookPort, sheet: string): Promise<numbe
   return count;
 }
 
-/** The sheets that hold formulas of ours, and those whose formulas were made plain. */
-export async function plainState(port: WorkbookPort): Promise<{ live: string[]; plain: string[] }> {
+/** How it stands with formulas and plain values. */
+export interface PlainState {
+  /** Sheets that hold formulas of ours. */
+  readonly live: readonly string[];
+  /** Sheets whose formulas were made plain. */
+  readonly plain: readonly string[];
+  /** Formulas of ours that the host has lost: they show #NAME?, or are spelt as only files spell them. */
+  readonly lost: readonly OurCell[];
+}
+
+/** Looks through the workbook once. */
+export async function plainState(port: WorkbookPort): Promise<PlainState> {
   const sheetsOf = (addresses: readonly unknown[]): string[] => [
     ...new Set(addresses.flatMap((address) => (typeof address === 'string' ? (parseAddress(address)?.sheet ?? []) : []))),
   ];
   const names = await port.sheetNames();
   const kept = names.includes(KEPT) ? await port.read(formatAddress({ sheet: KEPT, cell: KEPT_CELLS })) : null;
+  const cells = await port.ourCells();
   return {
-    live: sheetsOf((await port.ourCells()).map(({ address }) => address)),
+    live: sheetsOf(cells.map(({ address }) => address)),
     plain: sheetsOf((kept?.values ?? []).slice(1).map(([address]) => address)),
+    lost: cells.filter(({ formula, values }) => isLost(values[0]?.[0]) || mended(formula) !== formula),
   };
-}
-
-/** Formulas of ours that the host has lost: they show #NAME?, or are spelt as only files spell them. */
-export async function lostFormulas(port: WorkbookPort): Promise<readonly OurCell[]> {
-  return (await port.ourCells()).filter(({ formula, values }) => isLost(values[0]?.[0]) || mended(formula) !== formula);
 }
 
 /**
@@ -61,7 +68,7 @@ export async function lostFormulas(port: WorkbookPort): Promise<readonly OurCell
  * @returns how many
  */
 export async function repair(port: WorkbookPort): Promise<number> {
-  const lost = await lostFormulas(port);
+  const { lost } = await plainState(port);
   for (const { address, formula } of lost) await port.write(address, [[{ formula: mended(formula) }]]);
   return lost.length;
 }

@@ -2,6 +2,7 @@ import type { Block } from '../host/port';
 import { nameKey } from '../sheet/name';
 import type { Range } from '../sheet/range';
 import { formatAddress, formatZone, parseAddress, parseZone } from '../host/address';
+import type { Zone } from '../host/regions';
 
 /** The tables of a case, in the order the functions take them. */
 export const ROLES = ['pairs', 'people', 'duties', 'rules', 'current'] as const;
@@ -48,6 +49,44 @@ function isCurrent({ name, address }: Block): boolean {
   return CURRENT.test(`${name ?? ''} ${address}`);
 }
 
+/** Blank rows inside a table, at most; more of them end it. */
+const GAP = 5;
+
+/** Joins what blank rows have parted: a table goes on below them where no new headings begin. */
+export function joined(blocks: readonly Block[]): Block[] {
+  const parts = blocks.map((block) => ({ block, at: parseAddress(block.address), zone: parseZone(parseAddress(block.address)?.cell ?? '') }));
+  const ordered = parts.sort((a, b) => (a.zone?.top ?? 0) - (b.zone?.top ?? 0));
+  const result: Block[] = [];
+  for (const { block, at, zone } of ordered) {
+    const isPlain = block.name === null && at !== null && zone !== null;
+    const above = result.findIndex((one) => isPlain && one.name === null && goesOn(one, at.sheet, zone));
+    if (above === -1 || candidatesOf(block).length > 0) result.push(block);
+    else result[above] = append(result[above], block);
+  }
+  return result;
+}
+
+function goesOn(upper: Block, sheet: string, lower: Zone): boolean {
+  const at = parseAddress(upper.address)!;
+  const zone = parseZone(at.cell)!;
+  const gap = lower.top - zone.bottom - 1;
+  const isBelow = gap >= 0 && gap <= GAP && lower.left >= zone.left && lower.right <= zone.right;
+  return at.sheet === sheet && isBelow && candidatesOf(upper).length > 0;
+}
+
+function append(upper: Block, lower: Block): Block {
+  const { sheet, cell } = parseAddress(upper.address)!;
+  const [zone, more] = [parseZone(cell)!, parseZone(parseAddress(lower.address)!.cell)!];
+  const width = zone.right - zone.left + 1;
+  const blank = (): null[] => Array.from({ length: width }, () => null);
+  const values = [
+    ...upper.values,
+    ...Array.from({ length: more.top - zone.bottom - 1 }, blank),
+    ...lower.values.map((row) => Array.from({ length: width }, (_, c) => row[c - (more.left - zone.left)] ?? null)),
+  ];
+  return { name: null, address: formatAddress({ sheet, cell: formatZone({ ...zone, bottom: more.bottom }) }), values };
+}
+
 /** What a block could be, likeliest first. */
 export function candidatesOf(block: Block): Candidate[] {
   const first = block.values[0] ?? [];
@@ -69,7 +108,7 @@ export function candidatesOf(block: Block): Candidate[] {
  * @param blocks what the workbook holds; a block may be part of another one
  */
 export function propose(blocks: readonly Block[]): Map<Role, Candidate> {
-  const all = blocks.flatMap(candidatesOf);
+  const all = joined(blocks).flatMap(candidatesOf);
   const found = new Map<Role, Candidate>();
   const people = all.filter(({ role }) => role === 'people').sort(bySize)[0];
   const turned = all.map((one) => turn(one, people));

@@ -29,6 +29,7 @@ describe('which table is which', () => {
     ['headings of their own in another order', { A: [['Name', 'Shift'], ['Ann', 'Early']], B: PEOPLE }, { pairs: '! Rename the heading "Name" to Person and "Shift" to Duty.', people: 'B!A1:B3' }],
     ['a cross table', { G: [[null, 'Ann', 'Ben'], ['Choir', 'x', null], ['Organ', 1, 'x']], B: PEOPLE }, { pairs: 'DUTY.PAIRS(G!A1:C3)', people: 'B!A1:B3' }],
     ['a cross table with people down', { G: [[null, 'Choir', 'Organ'], ['Ann', 'x', null], ['Ben', 'x', 'x']], B: PEOPLE }, { pairs: 'DUTY.PAIRS(TRANSPOSE(G!A1:C3))', people: 'B!A1:B3' }],
+    ['a table parted by blank rows', { A: [...PAIRS, [null, null, null], ['Flute', 'Ann', null], ['Bells', 'Ben', 1]], B: PEOPLE }, { pairs: 'A!A1:C7', people: 'B!A1:B3' }],
     ['nothing like it', { X: PRICES }, {}],
   ])('%s', async (_, sheets, expected) => {
     expect(await proposed(sheets)).toEqual(expected);

@@ -2,6 +2,9 @@ import { MemoryWorkbook } from '../../src/host/memory';
 import { columnLetters, formatAddress, parseAddress, parseCell } from '../../src/host/address';
 import { WorkbenchWorkbook } from '../../src/host/workbench/workbook';
 import { describe, expect, it } from 'vitest';
+import { Journal } from '../../src/functions/journal';
+import { FUNCTIONS } from '../../src/functions/registry';
+import { registerInEngine } from '../../src/host/workbench/register';
 import { engine } from '../helpers/engine';
 import { describeWorkbookPort } from './contract';
 
@@ -9,6 +12,8 @@ describeWorkbookPort('the workbook in memory', () => {
   const port = new MemoryWorkbook();
   return { port, write: (address, formula) => port.type(address, formula), selected: () => port.selected };
 });
+
+registerInEngine(engine, FUNCTIONS, new Journal(), () => undefined);
 
 describeWorkbookPort('the workbench', () => {
   const model = new engine.Model({});

@@ -54,5 +54,55 @@ export function describeWorkbookPort(name: string, makeHarness: () => Harness): 
       await port.recalculate();
       expect(calls).toBeGreaterThan(0);
     });
+
+    it('adds sheets, and never writes over what is there', async () => {
+      const { port } = makeHarness();
+      const draft = { name: 'Tables', rows: [['Duty', 'Person'], ['=Choir', 1], [null, null]], names: [{ name: 'Choices', cells: 'A1:B3' }] };
+      const [first] = await port.addSheets([draft]);
+      const [second] = await port.addSheets([{ ...draft, rows: [['Other']] }]);
+      expect(new Set([first, second].map((name) => name.toLowerCase())).size).toBe(2);
+      expect(await port.sheetNames()).toEqual(expect.arrayContaining([first, second]));
+      const block = (await port.read('choices'))!;
+      expect(block.address).toBe(`${first}!A1:B3`);
+      expect(block.values).toEqual([['Duty', 'Person'], ['=Choir', 1], [null, null]]);
+      expect((await port.blocks()).map(({ address }) => address)).toContain(`${first}!A1:B3`);
+      expect(await port.formulasAt([`${first}!A2`])).toEqual([null]);
+    });
+
+    it('puts rows where there is room, and says where there is none', async () => {
+      const { port } = makeHarness();
+      const [sheet] = await port.addSheets([{ name: 'Rows', rows: [['Rule'], [null], [null]] }]);
+      expect(await port.appendRow(`${sheet}!A1:A3`, ['+1'])).toBe(`${sheet}!A2`);
+      expect(await port.appendRow(`${sheet}!A1:A3`, [2])).toBe(`${sheet}!A3`);
+      expect(await port.appendRow(`${sheet}!A1:A3`, [3])).toBeNull();
+      expect(await port.appendRow('Nowhere', [3])).toBeNull();
+      expect((await port.read(`${sheet}!A1:A3`))!.values).toEqual([['Rule'], ['+1'], [2]]);
+    });
+
+    it('writes cells, formulas among them, and finds those that are ours', async () => {
+      const { port } = makeHarness();
+      const [sheet] = await port.addSheets([{ name: 'Ours', rows: [['x']] }]);
+      await port.write(`${sheet}!B2`, [['text', { formula: '=DUTY.FINDINGS(A1:B2,3)' }]]);
+      const ours = (await port.ourCells()).filter(({ address }) => address.startsWith(`${sheet}!`));
+      expect(ours.map(({ address }) => address)).toEqual([`${sheet}!C2`]);
+      expect(ours[0].formula.replaceAll(' ', '')).toBe('=DUTY.FINDINGS(A1:B2,3)');
+      await port.write(`${sheet}!C2`, [[null]]);
+      expect((await port.ourCells()).filter(({ address }) => address.startsWith(`${sheet}!`))).toEqual([]);
+    });
+
+    it('tells what is selected, and when that changes', async () => {
+      const { port } = makeHarness();
+      const [sheet] = await port.addSheets([{ name: 'Selected', rows: [['Duty', 'Need', null], ['Choir', 2, null], [null, null, null]] }]);
+      const seen: string[] = [];
+      const end = port.onSelected((address) => seen.push(address));
+      await port.select(`${sheet}!B2`);
+      expect((await port.selection())!.values).toEqual([['Duty', 'Need'], ['Choir', 2]]);
+      await port.select(`${sheet}!C3`);
+      expect(await port.selection()).toBeNull();
+      expect(seen.at(-1)).toBe(`${sheet}!C3`);
+      end();
+      await port.select(`${sheet}!A1`);
+      expect(seen.at(-1)).toBe(`${sheet}!C3`);
+    });
   });
 }

@@ -8,6 +8,11 @@ const TITLE = { size: 14, colour: '#1f5a4c' };
 /** Points a character takes, about. */
 const CHARACTER = 6;
 
+/** The formula of a cell, or null. A text that begins with `=` is told as its own formula; no formula shows itself. */
+export function formulaIn(content: unknown, value: unknown): string | null {
+  return typeof content === 'string' && content.startsWith('=') && content !== value ? content : null;
+}
+
 /** Blank cells come as ''. */
 function toValues(values: readonly (readonly unknown[])[]): unknown[][] {
   return values.map((row) => row.map((cell) => (cell === '' ? null : cell)));
@@ -130,16 +135,15 @@ export class ExcelTables {
       const { worksheets } = context.workbook;
       worksheets.load('items/name');
       await context.sync();
-      const used = worksheets.items.map((sheet) => ({ sheet, range: sheet.getUsedRangeOrNullObject().load('address, formulas') }));
+      const used = worksheets.items.map((sheet) => ({ sheet, range: sheet.getUsedRangeOrNullObject().load('address, formulas, values') }));
       await context.sync();
       const found = used.filter(({ range }) => !range.isNullObject).flatMap(({ sheet, range }) => {
         const zone = parseZone(parseAddress(range.address)!.cell)!;
         return (range.formulas as unknown[][]).flatMap((row, r) =>
-          row.flatMap((formula, c) =>
-            typeof formula === 'string' && formula.startsWith('=') && callsUs(formula)
-              ? [{ formula, cell: sheet.getCell(zone.top + r, zone.left + c) }]
-              : [],
-          ),
+          row.flatMap((content, c) => {
+            const formula = formulaIn(content, range.values[r][c]);
+            return formula !== null && callsUs(formula) ? [{ formula, cell: sheet.getCell(zone.top + r, zone.left + c) }] : [];
+          }),
         );
       });
       const spills = Office.context.requirements.isSetSupported('ExcelApi', '1.12');

@@ -1,6 +1,6 @@
 import { parseAddress } from '../address';
 import type { Block, DraftCell, OurCell, SheetDraft, WorkbookPort } from '../port';
-import { ExcelTables } from './tables';
+import { ExcelTables, formulaIn } from './tables';
 
 /** The pane's view of a workbook in Excel. Asks only for what the Excel at hand supports. */
 export class ExcelWorkbook implements WorkbookPort {
@@ -46,12 +46,11 @@ export class ExcelWorkbook implements WorkbookPort {
       const ranges = parsed.map((address) => {
         const sheet = address === null ? undefined : sheets.get(address.sheet);
         if (address === null || sheet === undefined || sheet.isNullObject) return null;
-        return sheet.getRange(address.cell).load('formulas');
+        return sheet.getRange(address.cell).load('formulas, values');
       });
       await context.sync();
       return ranges.map((range) => {
-        const formula: unknown = range?.formulas[0][0];
-        return typeof formula === 'string' && formula.startsWith('=') ? formula : null;
+        return range === null ? null : formulaIn(range.formulas[0][0], range.values[0][0]);
       });
     });
   }

@@ -1,6 +1,6 @@
 import { html, nothing, type TemplateResult } from 'lit-html';
 import { handOverSheets } from '../../desk/handOver';
-import { lostFormulas, makeLive, makePlain, plainState, repair } from '../../desk/plain';
+import { makeLive, makePlain, plainState, repair } from '../../desk/plain';
 import type { Journal } from '../../functions/journal';
 import { formatAddress } from '../../host/address';
 import type { WorkbookPort } from '../../host/port';
@@ -18,9 +18,8 @@ export class HandOverPanel extends Panel {
   }
 
   protected override async look(): Promise<void> {
-    const { live, plain } = await plainState(this.port);
-    [this.#live, this.#plain] = [live, plain];
-    this.#lost = (await lostFormulas(this.port)).length;
+    const { live, plain, lost } = await plainState(this.port);
+    [this.#live, this.#plain, this.#lost] = [live, plain, lost.length];
   }
 
   protected override view(): TemplateResult {

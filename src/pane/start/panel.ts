@@ -2,7 +2,7 @@ import { html, nothing, type TemplateResult } from 'lit-html';
 import { answerDrafts } from '../../desk/answers';
 import { blankDrafts } from '../../desk/blankTables';
 import { preview } from '../../desk/preview';
-import { candidatesOf, propose, ROLES, turn, type Candidate, type Role } from '../../desk/propose';
+import { candidatesOf, joined, propose, ROLES, turn, type Candidate, type Role } from '../../desk/propose';
 import type { Journal } from '../../functions/journal';
 import { formatAddress, parseAddress, parseZone } from '../../host/address';
 import type { WorkbookPort } from '../../host/port';
@@ -32,7 +32,7 @@ export class StartPanel extends Panel {
     if (!this.#isOpen && this.journal.calls().length > 0) return;
     // What our formulas spill looks like tables too.
     const answers = new Set((await this.port.ourCells()).map(({ address }) => address));
-    const blocks = (await this.port.blocks()).filter(({ address }) => ![...answers].some((cell) => isIn(cell, address)));
+    const blocks = joined(await this.port.blocks()).filter(({ address }) => ![...answers].some((cell) => isIn(cell, address)));
     this.#proposed = propose(blocks);
     const people = this.#proposed.get('people');
     this.#candidates = blocks.flatMap(candidatesOf).map((one) => turn(one, people));
