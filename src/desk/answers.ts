@@ -28,10 +28,12 @@ const MOVES: Answer = { id: 'STEPS', title: 'The moves from the current plan', w
  * that none gets in the way of another.
  *
  * @param given the arguments as a formula takes them, in order; '' for one that is left out
+ * @param isLarge leaves out what would make every keystroke slow in a large case
  */
-export function answerDrafts(given: readonly string[]): SheetDraft[] {
+export function answerDrafts(given: readonly string[], isLarge = false): SheetDraft[] {
   const withCurrent = given[4] !== undefined && given[4] !== '';
-  return [sheet('Results', RESULTS, given), sheet('Why', withCurrent ? [MOVES, ...REASONS] : REASONS, given)];
+  const reasons = isLarge ? REASONS.slice(0, 1) : REASONS;
+  return [sheet('Results', RESULTS, given), sheet('Why', withCurrent ? [MOVES, ...reasons] : reasons, given)];
 }
 
 /** A call of one of our functions; arguments left out at the end are not written. */

@@ -146,6 +146,8 @@ export class Desk {
     this.#isChanged = false;
     model.on('command-dispatched', this, (command) => {
       if (engine.isCoreCommand(command)) this.#isChanged = true;
+      // Sheets were made by hand or by the pane: what was offered about those opened is past.
+      if (command.type === 'CREATE_SHEET') this.#parts.notice.hide();
     });
     this.#remark([...sentences, ...unknownFormulas(book, model)], answerSheets(book));
   }

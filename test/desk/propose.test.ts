@@ -38,7 +38,7 @@ describe('which table is which', () => {
   it('is looked at before anything is written', async () => {
     const port = new MemoryWorkbook();
     await port.addSheets([{ name: 'A', rows: [...PAIRS, ['Flute', 'Anne', 1]] }, { name: 'B', rows: PEOPLE }, { name: 'C', rows: DUTIES }]);
-    expect(preview(propose(await port.blocks()))).toEqual({ counts: ['3 pairs', '3 people', '2 duties with 2 seats'], faults: [], findings: 2 });
+    expect(preview(propose(await port.blocks()))).toEqual({ counts: ['3 pairs', '3 people', '2 duties with 2 seats'], faults: [], findings: 2, isLarge: false });
     await port.write('B!B2', [['two']]);
     expect(preview(propose(await port.blocks())).faults[0]).toMatch(/^People table, row 2/u);
   });

@@ -1,6 +1,7 @@
 import { html, nothing, svg, type TemplateResult } from 'lit-html';
 import type { Journal } from '../../functions/journal';
 import type { WorkbookPort } from '../../host/port';
+import { counted } from '../model';
 import { liveCases, Panel } from '../panel';
 import { knotPictures, loadPicture, type KnotPicture, type LoadBar, type LoadPicture } from './model';
 
@@ -10,6 +11,8 @@ const ROW = 22;
 const SIDE = 112;
 /** Letters of a name that fit on one side. */
 const LETTERS = 17;
+/** Of these, so many from the end. */
+const END = 5;
 
 /** Drawings of the bottlenecks and of what everyone holds, each with the same in words. */
 export class PicturesPanel extends Panel {
@@ -34,7 +37,9 @@ function knotView(knot: KnotPicture): TemplateResult {
   const { number, needed, places, duties, moreDuties, people, morePeople, lines } = knot;
   const rows = Math.max(duties.length + (moreDuties > 0 ? 1 : 0), people.length + (morePeople > 0 ? 1 : 0));
   const height = ROW * rows + 4;
-  const words = `Bottleneck ${number}: ${duties.length + moreDuties} duties need ${needed} seats; ${people.length + morePeople} people have room for ${places}.`;
+  const [dutyCount, personCount] = [duties.length + moreDuties, people.length + morePeople];
+  const need = `${counted(dutyCount, 'duty needs', 'duties need')} ${counted(needed, 'seat', 'seats')}`;
+  const words = `Bottleneck ${number}: ${need}; ${counted(personCount, 'person has', 'people have')} room for ${places}.`;
   const y = (row: number): number => ROW * row + ROW / 2 + 2;
   return html`
     <figure class="dp-figure">
@@ -65,11 +70,18 @@ function peopleWords(name: string, elsewhere: number, duties: readonly string[])
 }
 
 function label(name: string, x: number, row: number, style: string): TemplateResult {
-  const shown = name.length > LETTERS ? `${Array.from(name).slice(0, LETTERS - 1).join('')}…` : name;
+  const shown = shortened(name);
   const top = ROW * row + 3;
   return svg`<g><title>${name}</title>
     <rect class=${style} x=${x + 1} y=${top} width=${SIDE - 2} height=${ROW - 4} rx="3" />
     <text class="dp-label" x=${x + 6} y=${top + 13}>${shown}</text></g>`;
+}
+
+/** A name that fits, cut in its middle: what tells names apart often stands at the end. */
+function shortened(name: string): string {
+  const letters = Array.from(name);
+  if (letters.length <= LETTERS) return name;
+  return `${letters.slice(0, LETTERS - END - 1).join('')}…${letters.slice(-END).join('')}`;
 }
 
 function loadView(picture: LoadPicture): TemplateResult {

@@ -114,9 +114,11 @@ export class StartPanel extends Panel {
 
   async #answer(chosen: ReadonlyMap<Role, Candidate>): Promise<string> {
     const given = ROLES.map((role) => chosen.get(role)?.argument ?? '');
-    const names = await this.port.addSheets(answerDrafts(given));
+    const { isLarge } = preview(chosen);
+    const names = await this.port.addSheets(answerDrafts(given, isLarge));
     await this.port.select(formatAddress({ sheet: names[0], cell: 'A1' }));
-    return `The answers are on ${names.join(' and ')}. They follow every change of your tables.`;
+    const left = isLarge ? ' DUTY.REMEDIES and DUTY.ABSENCES were left out: in a case of this size they would slow every change.' : '';
+    return `The answers are on ${names.join(' and ')}. They follow every change of your tables.${left}`;
   }
 
   async #layOut(): Promise<string> {
