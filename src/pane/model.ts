@@ -2,6 +2,7 @@ import { LAST_PRIORITY } from '../cover/case';
 import { knotsOf } from '../functions/bottlenecks';
 import type { Call } from '../functions/journal';
 import { knotReason, shortageReason } from '../functions/reasons';
+import { currentKept, minimumsMissed } from '../functions/measures';
 import { proofWords } from '../functions/proofWords';
 import { beyondHelp } from '../functions/remedies';
 import type { Solved } from '../functions/solved';
@@ -33,6 +34,8 @@ export interface CaseView {
   readonly priorities: readonly (SeatCount & { readonly label: string })[];
   /** How far the plan is proven, in words; '' where there is no plan. */
   readonly proof: string;
+  /** What else there is to know at a glance, in sentences: minimums missed, changes against the current plan. */
+  readonly remarks: readonly string[];
   readonly short: readonly { readonly duty: string; readonly seats: number; readonly reason: string }[];
   /** Why seats stay uncovered, bottleneck by bottleneck. */
   readonly bottlenecks: readonly { readonly number: number; readonly seats: number; readonly reason: string }[];
@@ -66,7 +69,8 @@ export interface CellError extends CellView {
 /** Findings of one kind. */
 export interface FindingGroup {
   readonly finding: string;
-  readonly details: readonly { readonly place: string; readonly detail: string }[];
+  /** The row counts from 1 in its range; null where it is about the whole table. */
+  readonly details: readonly { readonly table: Finding['table']; readonly row: number | null; readonly detail: string }[];
 }
 
 /** @param calls the last answer of every cell */
@@ -114,7 +118,7 @@ function caseView(solved: Solved, calls: readonly Call[]): CaseView {
   const search = faults.length > 0 ? null : searchView(solved);
   const common = { id: cells[0].address, cells, sheets, findings: groupFindings(findings), errors, search };
   if (faults.length > 0 || !isSolvable(solved)) {
-    return { ...common, seats: null, priorities: [], proof: '', short: [], bottlenecks: [], remedies: [], fragile: [], fingerprint: '' };
+    return { ...common, seats: null, priorities: [], proof: '', remarks: [], short: [], bottlenecks: [], remedies: [], fragile: [], fingerprint: '' };
   }
   const { plan } = solved.outcome;
   const knowsWhy = solved.isAtHand('bottlenecks');
@@ -123,12 +127,21 @@ function caseView(solved: Solved, calls: readonly Call[]): CaseView {
     seats: { needed: plan.needed, covered: plan.covered },
     priorities: countPriorities(solved),
     proof: sentence(proofWords(solved.outcome)),
+    remarks: remarksOf(solved),
     short: knowsWhy ? shortViews(solved) : plainShortViews(solved),
     bottlenecks: knowsWhy ? bottleneckViews(solved) : [],
     remedies: isSmall(solved) && solved.isAtHand('remedies') ? remedyViews(solved) : null,
     fragile: isSmall(solved) && solved.isAtHand('absences') ? fragileViews(solved) : null,
     fingerprint: solved.fingerprint,
   };
+}
+
+function remarksOf({ case: kase, outcome: { plan } }: Solved): string[] {
+  const missed = minimumsMissed(kase, plan);
+  const remarks = missed === 0 ? [] : [`Minimums are missed by ${counted(missed, 'seat', 'seats')}.`];
+  if (kase.current === null) return remarks;
+  const kept = currentKept(kase, plan);
+  return [...remarks, `Of the current plan ${kept} of ${counted(kase.current.length, 'seat is', 'seats are')} kept; ${plan.seats.length - kept} are new.`];
 }
 
 function sentence(words: string): string {
@@ -218,11 +231,11 @@ function countPriorities({ case: kase, outcome }: Solved): (SeatCount & { label:
 }
 
 function groupFindings(findings: readonly Finding[]): FindingGroup[] {
-  const groups = new Map<string, { place: string; detail: string }[]>();
+  const groups = new Map<string, FindingGroup['details'][number][]>();
   for (const { table, row, finding, detail } of findings) {
     const group = groups.get(finding) ?? [];
     groups.set(finding, group);
-    group.push({ place: row === null ? table : `${table}, row ${row}`, detail });
+    group.push({ table, row, detail });
   }
   return [...groups].map(([finding, details]) => ({ finding, details }));
 }

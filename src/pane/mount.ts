@@ -2,6 +2,8 @@ import { render } from 'lit-html';
 import type { Journal } from '../functions/journal';
 import { NAMESPACE } from '../functions/registry';
 import { onSearch } from '../functions/searches';
+import { argumentAt } from '../desk/decide';
+import { formatAddress, formatZone, parseAddress, parseZone } from '../host/address';
 import type { WorkbookPort } from '../host/port';
 import { paneModel, spokenSummary } from './model';
 import { STYLE } from './style';
@@ -88,6 +90,7 @@ class Pane {
     const actions: Actions = {
       recalculate: () => void this.#port.recalculate(),
       select: (address) => void this.#port.select(address),
+      jump: (cell, table, row) => void jumpTo(this.#port, cell, table, row).catch(() => undefined),
       showAll: (key) => {
         this.#opened.add(key);
         this.#draw();
@@ -114,6 +117,19 @@ class Pane {
       if (turn !== this.#refreshes) return;
     }
   }
+}
+
+const TABLES: readonly string[] = ['Pairs', 'People', 'Duties', 'Rules', 'Current'];
+
+/** Selects the first cell of a row of a table, where the formula in a cell names the table's range. */
+async function jumpTo(port: WorkbookPort, cell: string, table: string, row: number): Promise<void> {
+  const reference = await argumentAt(port, cell, TABLES.indexOf(table));
+  const block = reference === null ? null : await port.read(reference);
+  const at = block === null ? null : parseAddress(block.address);
+  const zone = at === null ? null : parseZone(at.cell);
+  if (at === null || zone === null) return;
+  const top = zone.top + row - 1;
+  await port.select(formatAddress({ sheet: at.sheet, cell: formatZone({ top, bottom: top, left: zone.left, right: zone.left }) }));
 }
 
 /** Forgets calls whose cell no longer holds a formula with that function. */

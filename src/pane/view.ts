@@ -7,6 +7,8 @@ import type { SearchView } from './searchModel';
 export interface Actions {
   readonly recalculate: () => void;
   readonly select: (address: string) => void;
+  /** Selects the cell a finding is about: a row, from 1, of a table of the case that answers in a cell. */
+  readonly jump: (cell: string, table: FindingGroup['details'][number]['table'], row: number) => void;
   /** Shows the whole of a list that is cut off, by its key. */
   readonly showAll: (key: string) => void;
 }
@@ -76,7 +78,7 @@ function errorView(message: string): TemplateResult {
 }
 
 function planView(view: CaseView, opened: Opened, actions: Actions): TemplateResult {
-  const { id, seats, priorities, proof, short, bottlenecks, remedies, fragile } = view;
+  const { id, seats, priorities, proof, remarks, short, bottlenecks, remedies, fragile } = view;
   const { needed, covered } = seats!;
   const open = needed - covered;
   if (needed === 0) return html`<p>Nothing to cover yet: the tables name no duty that needs anyone.</p>`;
@@ -88,6 +90,7 @@ function planView(view: CaseView, opened: Opened, actions: Actions): TemplateRes
     </p>
     <div class="dp-gauge" aria-hidden="true"><span style="width:${needed === 0 ? 100 : (100 * covered) / needed}%"></span></div>
     <p class="dp-soft">${proof}</p>
+    ${remarks.map((remark) => html`<p>${remark}</p>`)}
     ${priorities.length > 0 ? prioritiesView(priorities) : nothing}
     ${section(`Short (${counted(short.length, 'duty', 'duties')})`, `${id} short`, short, shortView, opened, actions)}
     ${section('Why', `${id} why`, bottlenecks, bottleneckView, opened, actions)}
@@ -169,13 +172,24 @@ function findingsView(id: string, findings: readonly FindingGroup[], opened: Ope
           ${list(
             `${id} ${finding}`,
             details,
-            ({ place, detail }) => html`<li class="dp-item"><span class="dp-soft">${place}</span> <span class="dp-clip" dir="auto">${detail}</span></li>`,
+            (finding) => findingView(id, finding, actions),
             opened,
             actions,
           )}
         `,
       )}
     </details>
+  `;
+}
+
+function findingView(cell: string, { table, row, detail }: FindingGroup['details'][number], actions: Actions): TemplateResult {
+  return html`
+    <li class="dp-item">
+      ${row === null
+        ? html`<span class="dp-soft">${table}</span>`
+        : html`<button type="button" @click=${() => actions.jump(cell, table, row)}>${table}, row ${row}</button>`}
+      <span class="dp-clip" dir="auto">${detail}</span>
+    </li>
   `;
 }
 

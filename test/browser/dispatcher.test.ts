@@ -126,6 +126,16 @@ describe('the functions behind the real client', () => {
     expect(rows.filter((row) => row[3] === 'Uncovered').length).toBeLessThan(10);
   });
 
+  it('a case that is no flow is answered when its search is over', async () => {
+    const day = 46_000;
+    const times: [string, number, number][] = [['Dawn', 6, 12], ['Noon', 11, 16], ['Dusk', 15, 20]];
+    const duties = [['Duty', 'Start', 'End'], ...times.map(([name, from, to]) => [name, day + from / 24, day + to / 24])];
+    const pairs = [['Dawn', 'Ann'], ['Noon', 'Ann'], ['Noon', 'Bo'], ['Dusk', 'Ann']];
+    const { succeeded, value } = await call('ASSIGN', [pairs, [[2]], duties, null, null]);
+    expect(succeeded).toBe(true);
+    expect((value as unknown[][]).slice(1).map(([duty, person]) => [duty, person])).toEqual([['Dawn', 'Ann'], ['Noon', 'Bo'], ['Dusk', 'Ann']]);
+  });
+
   it('the page asks nothing of anyone but its own origin and the vendor', () => {
     expect(seen.foreign.filter((url) => !url.startsWith(VENDOR))).toEqual([]);
     expect(seen.errors).toEqual([]);

@@ -63,7 +63,14 @@ describe('the workbench with the demo', () => {
 
   it('takes in a row that is added below a table', async () => {
     await desk.type('Inputs!G25', 'Wilma Tarn');
-    await desk.pane.getByText('Findings (1)').waitFor();
+    await desk.pane.getByText('Findings (1)').click();
+    await desk.select('Results!A1');
+    await desk.pane.getByRole('button', { name: 'People, row 24' }).click();
+    await desk.page.waitForFunction(() => {
+      const { getters } = window.dutyproof!.workbook.model;
+      const { sheetId, col, row } = getters.getActivePosition();
+      return getters.getSheetName(sheetId) === 'Inputs' && col === 6 && row === 24;
+    });
   });
 
   it('shows what cannot be read in words, and answers again when it is mended', async () => {

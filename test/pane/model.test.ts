@@ -44,7 +44,7 @@ describe('what the pane shows', () => {
     const journal = new Journal();
     fill(journal, 'FINDINGS', 'A!A1', [...PAIRS, ['Choir', 'Ann']], [[1]], DUTIES);
     const [{ findings }] = paneModel(journal.calls()).cases;
-    expect(findings.map(({ finding, details }) => [finding, details.map(({ place }) => place)])).toEqual([
+    expect(findings.map(({ finding, details }) => [finding, details.map(({ table, row }) => (row === null ? table : `${table}, row ${row}`))])).toEqual([
       ['Duty not listed', ['Pairs, row 4']],
       ['Row given twice', ['Pairs, row 5']],
     ]);
