@@ -23,6 +23,7 @@ export const STYLE = `
   min-height: 28px; padding: 3px 10px; border: 1px solid var(--dp-line); border-radius: 4px;
   background: var(--dp-card); color: inherit; font: inherit; cursor: pointer;
 }
+.dp-bar button { flex: none; white-space: nowrap; }
 .dp-pane button:hover { border-color: var(--dp-soft); }
 .dp-pane :focus-visible { outline: 2px solid var(--dp-focus); outline-offset: 1px; }
 .dp-case { margin: 0 0 14px; padding: 12px; border: 1px solid var(--dp-line); border-radius: 6px; background: var(--dp-card); }
