@@ -83,7 +83,7 @@ export interface SheetDraft {
   readonly titleRows?: readonly number[];
   /** Widths in characters, by column. */
   readonly widths?: readonly number[];
-  /** Cells such as `B9` that are drawn as an alarm while their text begins as `ALARM` does. */
+  /** Cells such as `B9`, or rectangles of them, that are drawn as an alarm while their text begins as `ALARM` does. */
   readonly alarms?: readonly string[];
   /** Names for rectangles of this sheet, such as `{ name: 'Pairs', cells: 'A2:C40' }`. */
   readonly names?: readonly { readonly name: string; readonly cells: string }[];
@@ -92,7 +92,7 @@ export interface SheetDraft {
 }
 
 /** How the text of an alarm begins. */
-export const ALARM = 'Something is wrong';
+export const ALARM = 'Wrong';
 
 /** A cell with one of our functions. */
 export interface OurCell {
