@@ -1,4 +1,4 @@
-import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, parseZone } from './address';
+import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, parseReference, parseZone } from './address';
 import { callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft, type WorkbookPort } from './port';
 import { regionAt, regionsOf, type Zone } from './regions';
 import { freeSheetName } from './sheetNames';
@@ -73,9 +73,10 @@ export class MemoryWorkbook implements WorkbookPort {
   read(reference: string): Promise<Block | null> {
     const address = this.#names.get(reference.toLowerCase()) ?? reference;
     const parsed = parseAddress(address);
-    const zone = parsed === null ? null : parseZone(parsed.cell);
-    if (parsed === null || zone === null || !this.#sheets.has(parsed.sheet)) return Promise.resolve(null);
-    return Promise.resolve(this.#block(parsed.sheet, zone));
+    if (parsed === null || !this.#sheets.has(parsed.sheet)) return Promise.resolve(null);
+    const rows = [...this.#sheets.get(parsed.sheet)!.keys()].map((cell) => parseCell(cell)!.row);
+    const zone = parseReference(parsed.cell, Math.max(-1, ...rows) + 1);
+    return Promise.resolve(zone === null ? null : this.#block(parsed.sheet, zone));
   }
 
   write(address: string, cells: readonly (readonly DraftCell[])[]): Promise<void> {

@@ -37,14 +37,18 @@ export interface WorkbookPort {
   /** Everything that may be a table: named ranges and what the sheets hold, each once. */
   blocks(): Promise<readonly Block[]>;
 
-  /** @param reference an address or a name, as in an argument of a formula; null where it is neither */
+  /**
+   * @param reference an address, whole columns of a sheet such as `Sheet!A:C` among them, or a name, as
+   *   in an argument of a formula; columns are read down to a blank row below what is filled
+   * @returns null where it is neither
+   */
   read(reference: string): Promise<Block | null>;
 
   /** Writes cells from the address on, which is the top left one. */
   write(address: string, cells: readonly (readonly DraftCell[])[]): Promise<void>;
 
   /**
-   * Puts a row into the first blank row of a range.
+   * Puts a row into the first blank row of a range. A table of Excel that is full grows by the row.
    * @returns the address of the row; null where the range is full or not there
    */
   appendRow(reference: string, cells: readonly DraftCell[]): Promise<string | null>;
@@ -64,7 +68,7 @@ export interface WorkbookPort {
 export interface Block {
   /** As `Sheet!A1:D20`. */
   readonly address: string;
-  /** The named range or table that is exactly this; null where there is none. */
+  /** The named range or table that is exactly this, as a formula takes it; null where there is none. */
   readonly name: string | null;
   /** Row by row; blanks null. */
   readonly values: Range;

@@ -2,6 +2,7 @@ import { formatAddress, formatZone, parseAddress, parseZone } from '../address';
 import { ALARM, callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft } from '../port';
 import { regionsOf } from '../regions';
 import { freeSheetName } from '../sheetNames';
+import { find, WITH_HEADINGS } from './find';
 
 const HEADING = { fill: '#e3efe9' };
 const TITLE = { size: 14, colour: '#1f5a4c' };
@@ -27,8 +28,12 @@ function toFormula(cell: DraftCell): string | number {
 }
 
 function blockOf(range: Excel.Range, name: string | null): Block {
+  return { address: blockAddress(range), name, values: toValues(range.values) };
+}
+
+function blockAddress(range: Excel.Range): string {
   const { sheet, cell } = parseAddress(range.address)!;
-  return { address: formatAddress({ sheet, cell }), name, values: toValues(range.values) };
+  return formatAddress({ sheet, cell });
 }
 
 /** Reads and writes the tables of a workbook in Excel. */
@@ -63,7 +68,8 @@ export class ExcelTables {
       await context.sync();
       const ranges = [
         ...names.items.filter(({ type }) => type === 'Range').map((item) => ({ name: item.name, range: item.getRangeOrNullObject() })),
-        ...tables.items.map((table) => ({ name: table.name, range: table.getRange() })),
+        // By its plain name a formula takes a table without its headings.
+        ...tables.items.map((table) => ({ name: `${table.name}${WITH_HEADINGS}`, range: table.getRange() })),
       ];
       for (const { range } of ranges) range.load('address, values');
       const used = worksheets.items.map((sheet) => sheet.getUsedRangeOrNullObject(true).load('address, values'));
@@ -77,7 +83,7 @@ export class ExcelTables {
 
   async read(reference: string): Promise<Block | null> {
     return Excel.run(async (context) => {
-      const { range, name } = await this.#find(context, reference);
+      const { range, name } = await find(context, reference);
       if (range === null) return null;
       range.load('address, values');
       await context.sync();
@@ -97,16 +103,17 @@ export class ExcelTables {
 
   async appendRow(reference: string, cells: readonly DraftCell[]): Promise<string | null> {
     return Excel.run(async (context) => {
-      const { range } = await this.#find(context, reference);
+      const { range, table } = await find(context, reference);
       if (range === null) return null;
       range.load('values');
       await context.sync();
       const at = firstBlankRow(toValues(range.values));
-      if (at === -1) return null;
-      const start = range.getCell(at, 0).load('address');
+      if (at === -1 && table === null) return null;
+      if (at === -1) table!.rows.add();
+      const start = (at === -1 ? table!.getRange().getLastRow().getCell(0, 0) : range.getCell(at, 0)).load('address');
       fill(start, [cells]);
       await context.sync();
-      return start.address;
+      return blockAddress(start);
     });
   }
 
@@ -114,9 +121,13 @@ export class ExcelTables {
     const taken = new Set((await this.sheetNames()).map((name) => name.toLowerCase()));
     return Excel.run(async (context) => {
       const { worksheets, names } = context.workbook;
-      names.load('items/name');
+      names.load('items/name, items/type');
       await context.sync();
-      const known = new Set(names.items.map(({ name }) => name.toLowerCase()));
+      // A name whose cells are gone (#REF!) stands in the way of nothing.
+      const wanted = new Set(drafts.flatMap((draft) => (draft.names ?? []).map(({ name }) => name.toLowerCase())));
+      const isDead = ({ name, type }: Excel.NamedItem): boolean => type === 'Error' && wanted.has(name.toLowerCase());
+      const known = new Set(names.items.filter((item) => !isDead(item)).map(({ name }) => name.toLowerCase()));
+      for (const item of names.items.filter(isDead)) item.delete();
       const made = drafts.map((draft) => ({ draft, sheet: worksheets.add(freeSheetName(draft.name, taken)).load('name') }));
       for (const { draft, sheet } of made) {
         for (const { name, cells } of draft.names ?? []) if (!known.has(name.toLowerCase())) names.add(name, sheet.getRange(cells));
@@ -159,21 +170,6 @@ export class ExcelTables {
         values: toValues(spill === null || spill.isNullObject ? cell.values : spill.values),
       }));
     });
-  }
-
-  async #find(context: Excel.RequestContext, reference: string): Promise<{ range: Excel.Range | null; name: string | null }> {
-    const { names, tables, worksheets } = context.workbook;
-    const parsed = parseAddress(reference.trim());
-    if (parsed !== null) {
-      const sheet = worksheets.getItemOrNullObject(parsed.sheet).load('isNullObject');
-      await context.sync();
-      return { range: sheet.isNullObject || parseZone(parsed.cell) === null ? null : sheet.getRange(parsed.cell), name: null };
-    }
-    const item = names.getItemOrNullObject(reference.trim()).load('isNullObject, type');
-    const table = tables.getItemOrNullObject(reference.trim()).load('isNullObject');
-    await context.sync();
-    if (!table.isNullObject) return { range: table.getRange(), name: reference.trim() };
-    return { range: item.isNullObject || item.type !== 'Range' ? null : item.getRange(), name: reference.trim() };
   }
 }
 

@@ -1,4 +1,4 @@
-import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, parseZone } from '../address';
+import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, parseReference, parseZone } from '../address';
 import { callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft } from '../port';
 import { regionAt, regionsOf, type Zone } from '../regions';
 import { freeSheetName } from '../sheetNames';
@@ -48,9 +48,12 @@ export class EngineTables {
     const named = getters.getNamedRanges().find(({ name }) => name.toLowerCase() === reference.trim().toLowerCase());
     if (named !== undefined) return this.#block(named.range.sheetId, named.range.zone);
     const parsed = parseAddress(reference.trim());
-    const zone = parsed === null ? null : parseZone(parsed.cell);
     const sheetId = parsed === null ? undefined : getters.getSheetIdByName(parsed.sheet);
-    return zone === null || sheetId === undefined ? null : this.#block(sheetId, zone);
+    if (parsed === null || sheetId === undefined) return null;
+    const rows = getters.getCells(sheetId).map(({ id }) => getters.getCellPosition(id).row);
+    const last = Math.min(rows.reduce((a, b) => Math.max(a, b), -1) + 1, getters.getNumberRows(sheetId) - 1);
+    const zone = parseReference(parsed.cell, last);
+    return zone === null ? null : this.#block(sheetId, zone);
   }
 
   write(address: string, cells: readonly (readonly DraftCell[])[]): void {
