@@ -1,6 +1,6 @@
 import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, parseReference, parseZone } from './address';
 import { callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft, type WorkbookPort } from './port';
-import { regionAt, regionsOf, type Zone } from './regions';
+import { regionAt, regionsOf, roomBelow, type Zone } from './regions';
 import { freeSheetName } from './sheetNames';
 
 type Content = string | number | null | { readonly formula: string };
@@ -65,7 +65,10 @@ export class MemoryWorkbook implements WorkbookPort {
 
   async blocks(): Promise<readonly Block[]> {
     const named = await Promise.all([...this.#names.keys()].map((name) => this.read(name)));
-    const regions = [...this.#sheets.keys()].flatMap((sheet) => this.#regions(sheet).map((zone) => this.#block(sheet, zone)));
+    const regions = [...this.#sheets.keys()].flatMap((sheet) => {
+      const zones = this.#regions(sheet);
+      return zones.map((zone): Block => ({ ...this.#block(sheet, zone), room: roomBelow(zone, zones, Infinity) }));
+    });
     const known = new Set(named.map((block) => block?.address));
     return [...named.filter((block) => block !== null), ...regions.filter(({ address }) => !known.has(address))];
   }

@@ -72,6 +72,8 @@ export interface Block {
   readonly name: string | null;
   /** Row by row; blanks null. */
   readonly values: Range;
+  /** Blank rows below it that a range may go on over, so that rows added later count too; none where it is not said. */
+  readonly room?: number;
 }
 
 /** What is written into a cell. A string is always text, even one that begins with `=`. */

@@ -1,6 +1,6 @@
 import { formatAddress, formatZone, parseAddress, parseZone } from '../address';
 import { ALARM, callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft } from '../port';
-import { regionsOf } from '../regions';
+import { regionsOf, roomBelow } from '../regions';
 import { freeSheetName } from '../sheetNames';
 import { find, WITH_HEADINGS } from './find';
 
@@ -173,14 +173,19 @@ export class ExcelTables {
   }
 }
 
+/** The last row of a sheet, from 0. */
+const LAST_ROW = 1_048_575;
+
 /** The filled regions of a used range. */
 function regionBlocks({ address, values }: Block): Block[] {
   const { sheet, cell } = parseAddress(address)!;
   const { top, left } = parseZone(cell)!;
-  return regionsOf(values.length, values[0]?.length ?? 0, (row, column) => values[row][column] !== null).map((zone) => {
+  const zones = regionsOf(values.length, values[0]?.length ?? 0, (row, column) => values[row][column] !== null);
+  return zones.map((zone) => {
     const moved = { top: zone.top + top, bottom: zone.bottom + top, left: zone.left + left, right: zone.right + left };
     const rows = values.slice(zone.top, zone.bottom + 1).map((row) => row.slice(zone.left, zone.right + 1));
-    return { address: formatAddress({ sheet, cell: formatZone(moved) }), name: null, values: rows };
+    const room = roomBelow(zone, zones, LAST_ROW - top);
+    return { address: formatAddress({ sheet, cell: formatZone(moved) }), name: null, values: rows, room };
   });
 }
 

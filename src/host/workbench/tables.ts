@@ -1,6 +1,6 @@
 import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, parseReference, parseZone } from '../address';
 import { callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft } from '../port';
-import { regionAt, regionsOf, type Zone } from '../regions';
+import { regionAt, regionsOf, roomBelow, type Zone } from '../regions';
 import { freeSheetName } from '../sheetNames';
 import type { Engine, EngineModel, EngineZone } from './engine';
 import { literal } from './literal';
@@ -39,7 +39,12 @@ export class EngineTables {
     const { getters } = this.#model;
     const named = getters.getNamedRanges().map(({ range }) => this.#block(range.sheetId, range.zone));
     const known = new Set(named.map(({ address }) => address));
-    const regions = getters.getSheetIds().flatMap((sheetId) => this.#regions(sheetId).map((zone) => this.#block(sheetId, zone)));
+    const regions = getters.getSheetIds().flatMap((sheetId) => {
+      const zones = this.#regions(sheetId);
+      const filled = [...zones, ...this.#spills(sheetId)];
+      const last = getters.getNumberRows(sheetId) - 1;
+      return zones.map((zone): Block => ({ ...this.#block(sheetId, zone), room: roomBelow(zone, filled, last) }));
+    });
     return [...named, ...regions.filter(({ address }) => !known.has(address))];
   }
 
@@ -170,6 +175,13 @@ export class EngineTables {
       [rows, columns] = [Math.max(rows, row + 1), Math.max(columns, col + 1)];
     }
     return regionsOf(rows, columns, (row, column) => filled.has(`${row} ${column}`));
+  }
+
+  /** What formulas fill beside their own cells. */
+  #spills(sheetId: string): Zone[] {
+    const { getters } = this.#model;
+    const formulas = getters.getCells(sheetId).filter(({ isFormula }) => isFormula);
+    return formulas.flatMap(({ id }) => getters.getSpreadZone(getters.getCellPosition(id)) ?? []);
   }
 
   #block(sheetId: string, { top, left, bottom, right }: EngineZone): Block {

@@ -1,6 +1,6 @@
 import { html, nothing, type TemplateResult } from 'lit-html';
 import { answerDrafts } from '../../desk/answers';
-import { blankDrafts } from '../../desk/blankTables';
+import { blankDrafts, blankRules } from '../../desk/blankTables';
 import { preview } from '../../desk/preview';
 import { candidatesOf, joined, propose, ROLES, turn, type Candidate, type Role } from '../../desk/propose';
 import type { Journal } from '../../functions/journal';
@@ -113,12 +113,16 @@ export class StartPanel extends Panel {
   }
 
   async #answer(chosen: ReadonlyMap<Role, Candidate>): Promise<string> {
-    const given = ROLES.map((role) => chosen.get(role)?.argument ?? '');
+    const rules = chosen.has('rules') ? null : await blankRules(this.port);
+    const given = ROLES.map((role) => chosen.get(role)?.argument ?? (role === 'rules' ? (rules?.reference ?? '') : ''));
     const { isLarge } = preview(chosen);
-    const names = await this.port.addSheets(answerDrafts(given, isLarge));
-    await this.port.select(formatAddress({ sheet: names[0], cell: 'A1' }));
+    const answers = answerDrafts(given, isLarge);
+    const made = await this.port.addSheets(rules === null ? answers : [...answers, rules]);
+    await this.port.select(formatAddress({ sheet: made[0], cell: 'A1' }));
+    const names = made.slice(0, answers.length);
     const left = isLarge ? ' DUTY.REMEDIES and DUTY.ABSENCES were left out: in a case of this size they would slow every change.' : '';
-    return `The answers are on ${names.join(' and ')}. They follow every change of your tables.${left}`;
+    const place = rules === null ? '' : ` What you decide is written on ${made[answers.length]}.`;
+    return `The answers are on ${names.join(' and ')}. They follow every change of your tables.${place}${left}`;
   }
 
   async #layOut(): Promise<string> {
