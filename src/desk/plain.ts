@@ -25,7 +25,9 @@ export async function makePlain(port: WorkbookPort, sheet: string): Promise<Exch
   const cells = (await port.ourCells()).filter(({ address }) => parseAddress(address)?.sheet === sheet);
   const left: string[] = [];
   let done = 0;
-  for (const { address, formula, values } of cells) {
+  const shown = await port.shownBy(cells.map(({ address }) => address));
+  for (const [i, { address, formula }] of cells.entries()) {
+    const values = shown[i];
     if (!hasAnswer(values)) {
       left.push(`${address} shows no answer.`);
       continue;
@@ -73,13 +75,12 @@ export interface PlainState {
   readonly lost: readonly OurCell[];
 }
 
-/** Looks through the workbook once. */
-export async function plainState(port: WorkbookPort): Promise<PlainState> {
-  const cells = await port.ourCells();
+/** @param cells all that the port knows of ours */
+export async function plainState(port: WorkbookPort, cells: readonly OurCell[]): Promise<PlainState> {
   return {
     live: sheetsOf(cells),
     plain: sheetsOf(await keptFormulas(port)),
-    lost: cells.filter(({ formula, values }) => isLost(values[0]?.[0]) || mended(formula) !== formula),
+    lost: cells.filter(({ formula, value }) => isLost(value) || mended(formula) !== formula),
   };
 }
 
@@ -92,7 +93,7 @@ function sheetsOf(cells: readonly { readonly address: string }[]): string[] {
  * @returns how many
  */
 export async function repair(port: WorkbookPort): Promise<number> {
-  const { lost } = await plainState(port);
+  const { lost } = await plainState(port, await port.ourCells());
   for (const { address, formula } of lost) await port.write(address, [[{ formula: mended(formula) }]]);
   return lost.length;
 }

@@ -1,7 +1,8 @@
 import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, parseReference, parseZone } from './address';
-import { callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft, type WorkbookPort } from './port';
+import { callsUs, firstBlankRow, type Block, type Calculation, type DraftCell, type OurCell, type SheetDraft, type WorkbookPort } from './port';
 import { regionAt, regionsOf, roomBelow, type Zone } from './regions';
 import { freeSheetName } from './sheetNames';
+import type { Range } from '../sheet/range';
 
 type Content = string | number | null | { readonly formula: string };
 
@@ -14,6 +15,8 @@ export class MemoryWorkbook implements WorkbookPort {
   readonly #selectListeners = new Set<(address: string) => void>();
   selected: string | null = null;
   recalculations = 0;
+  /** As the host would tell it. */
+  calculated: Calculation = { isManual: false, isPending: false };
 
   /** Puts a formula into a cell, or takes it away, and tells whoever listens. */
   type(address: string, formula: string | null): void {
@@ -120,10 +123,18 @@ export class MemoryWorkbook implements WorkbookPort {
     const cells = [...this.#sheets].flatMap(([sheet, contents]) =>
       [...contents].flatMap(([cell, content]) => {
         const formula = formulaOf(content);
-        return formula !== null && callsUs(formula) ? [{ address: formatAddress({ sheet, cell }), formula, values: [[null]] }] : [];
+        return formula !== null && callsUs(formula) ? [{ address: formatAddress({ sheet, cell }), formula, value: null }] : [];
       }),
     );
     return Promise.resolve(cells);
+  }
+
+  shownBy(addresses: readonly string[]): Promise<readonly Range[]> {
+    return Promise.resolve(addresses.map(() => [[null]]));
+  }
+
+  calculation(): Promise<Calculation> {
+    return Promise.resolve(this.calculated);
   }
 
   #at(address: string): Content {

@@ -62,6 +62,23 @@ export interface WorkbookPort {
 
   /** Every cell that holds one of our functions, or did before the host lost it. */
   ourCells(): Promise<readonly OurCell[]>;
+
+  /**
+   * @param addresses cells with formulas
+   * @returns for each, what it shows with all it spills over, row by row; blanks null
+   */
+  shownBy(addresses: readonly string[]): Promise<readonly Range[]>;
+
+  /** How it stands with the calculation of the workbook. */
+  calculation(): Promise<Calculation>;
+}
+
+/** Whether a workbook is calculated. */
+export interface Calculation {
+  /** True where it is calculated only when someone asks. */
+  readonly isManual: boolean;
+  /** True where something has changed that is not calculated yet; null where the host does not tell. */
+  readonly isPending: boolean | null;
 }
 
 /** A filled rectangle of cells. */
@@ -104,8 +121,8 @@ export const ALARM = 'Wrong';
 export interface OurCell {
   readonly address: string;
   readonly formula: string;
-  /** What it shows with all it spills over, row by row; blanks null. */
-  readonly values: Range;
+  /** What the cell itself shows; null where it is blank. */
+  readonly value: unknown;
 }
 
 /** Whether a formula calls one of our functions, however the host spells it. */

@@ -4,7 +4,8 @@ import { NAMESPACE } from '../functions/registry';
 import { onSearch } from '../functions/searches';
 import { argumentAt } from '../desk/decide';
 import { formatAddress, formatZone, parseAddress, parseZone } from '../host/address';
-import type { WorkbookPort } from '../host/port';
+import type { OurCell, WorkbookPort } from '../host/port';
+import { freshnessOf, type Freshness } from './freshness';
 import { paneModel, spokenSummary } from './model';
 import { STYLE } from './style';
 import { paneView, type Actions } from './view';
@@ -52,6 +53,9 @@ class Pane {
   readonly #ends: (() => void)[] = [];
   #timer: ReturnType<typeof setTimeout> | undefined;
   #refreshes = 0;
+  #ours: readonly OurCell[] = [];
+  /** Null until the host has told. */
+  #freshness: Freshness | null = null;
 
   constructor(port: WorkbookPort, journal: Journal) {
     [this.#port, this.#journal] = [port, journal];
@@ -96,8 +100,8 @@ class Pane {
         this.#draw();
       },
     };
-    render(paneView(model, this.#opened, actions), this.#body);
-    const spoken = spokenSummary(model);
+    render(paneView(model, this.#freshness, this.#opened, actions), this.#body);
+    const spoken = this.#freshness?.state === 'stale' ? this.#freshness.words : spokenSummary(model);
     if (this.#live.textContent !== spoken) this.#live.textContent = spoken;
   }
 
@@ -106,6 +110,10 @@ class Pane {
     // A busy host (Excel, while a cell is being edited) does not tell its formulas: then nothing is forgotten.
     await forgetGone(this.#port, this.#journal).catch(() => undefined);
     if (turn !== this.#refreshes) return;
+    // A host that cannot tell leaves what is known.
+    this.#ours = await this.#port.ourCells().catch(() => this.#ours);
+    this.#freshness = await freshnessOf(this.#port, this.#journal, this.#ours).catch(() => this.#freshness);
+    if (turn !== this.#refreshes) return;
     this.#draw();
     // Where nothing is answered yet, to begin is what there is to do.
     const isFirst = this.#journal.calls().length === 0;
@@ -113,7 +121,7 @@ class Pane {
     const isOnTop = this.#body.nextSibling === element;
     if (isFirst !== isOnTop) this.element.insertBefore(element, isFirst ? this.#body.nextSibling : this.#caution);
     for (const panel of this.#panels) {
-      await panel.refresh();
+      await panel.refresh(this.#ours);
       if (turn !== this.#refreshes) return;
     }
   }

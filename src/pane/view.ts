@@ -1,6 +1,8 @@
 import { html, nothing, type TemplateResult } from 'lit-html';
 import { repeat } from 'lit-html/directives/repeat.js';
-import { counted, type CaseView, type CellError, type CellView, type FindingGroup, type PaneModel } from './model';
+import { type CaseView, type CellError, type CellView, type FindingGroup, type PaneModel } from './model';
+import { counted } from './words';
+import type { Freshness } from './freshness';
 import type { SearchView } from './searchModel';
 
 /** What the views may ask for. */
@@ -20,14 +22,18 @@ export type Opened = ReadonlySet<string>;
 const FIRST = 8;
 
 /** The whole pane. Names come from cells: they are always text, never markup. */
-export function paneView(model: PaneModel, opened: Opened, actions: Actions): TemplateResult {
+export function paneView(model: PaneModel, freshness: Freshness | null, opened: Opened, actions: Actions): TemplateResult {
   const isEmpty = model.cases.length + model.strays.length === 0;
+  const isStale = freshness?.state === 'stale';
   return html`
     <div class="dp-bar">
       <h2>Cases in this workbook</h2>
       <button type="button" @click=${actions.recalculate}>Recalculate</button>
     </div>
-    ${isEmpty ? emptyView() : nothing}
+    ${isStale || (freshness !== null && !isEmpty)
+      ? html`<p class=${isStale ? 'dp-error' : 'dp-soft'} data-state=${freshness.state}>${freshness.words}</p>`
+      : nothing}
+    ${isEmpty && !isStale ? emptyView() : nothing}
     ${repeat(model.cases, ({ id }) => id, (view) => caseView(view, opened, actions))}
     ${model.strays.length > 0 ? straysView(model.strays, actions) : nothing}
   `;
@@ -36,8 +42,7 @@ export function paneView(model: PaneModel, opened: Opened, actions: Actions): Te
 function emptyView(): TemplateResult {
   return html`
     <section class="dp-case">
-      <p>Nothing has been calculated yet in this session.</p>
-      <p class="dp-soft">If the workbook holds Dutyproof formulas, press Recalculate. Otherwise begin below.</p>
+      <p>This workbook holds no formulas of Dutyproof yet. Begin below.</p>
     </section>
   `;
 }

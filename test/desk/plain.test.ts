@@ -26,14 +26,14 @@ describe('formulas and plain values', () => {
     expect(await makePlain(port, 'Out')).toEqual({ done: 1, left: [] });
     expect(await shown()).toEqual(before);
     expect(await port.ourCells()).toEqual([]);
-    expect(await plainState(port)).toEqual({ live: [], plain: ['Out'], lost: [] });
+    expect(await plainState(port, await port.ourCells())).toEqual({ live: [], plain: ['Out'], lost: [] });
     await port.write('In!B2', [['Ben']]);
     expect(await shown()).toEqual(before);
     await port.write('In!B2', [['=Ann']]);
     expect(await makeLive(port, 'Out')).toEqual({ done: 1, left: [] });
     expect(await shown()).toEqual(before);
     expect((await port.ourCells()).map(({ formula }) => formula.replaceAll(' ', ''))).toEqual(['=DUTY.ASSIGN(In!A1:B2,In!D1:E2)']);
-    expect(await plainState(port)).toEqual({ live: ['Out'], plain: [], lost: [] });
+    expect(await plainState(port, await port.ourCells())).toEqual({ live: ['Out'], plain: [], lost: [] });
   });
 
   it('are not put back over cells that were changed or moved since', async () => {
@@ -47,7 +47,7 @@ describe('formulas and plain values', () => {
     port.model.dispatch('ADD_COLUMNS_ROWS', { sheetId: port.model.getters.getSheetIdByName('Out')!, sheetName: 'Out', dimension: 'ROW', position: 'before', base: 0, quantity: 1 });
     expect((await makeLive(port, 'Out')).done).toBe(0);
     expect((await port.read('Out!A3'))!.values).toEqual([['Duty']]);
-    expect(await plainState(port)).toMatchObject({ live: [], plain: ['Out'] });
+    expect(await plainState(port, await port.ourCells())).toMatchObject({ live: [], plain: ['Out'] });
   });
 
   it('that show an error are not made plain, and none is made plain that could not be kept', async () => {
@@ -59,14 +59,14 @@ describe('formulas and plain values', () => {
     const full = await makePlain(port, 'Out');
     expect(full.done).toBe(0);
     expect(full.left).toContainEqual(expect.stringMatching(/^Out!A2: the sheet Formulas kept is full/u));
-    expect((await plainState(port)).live).toEqual(['Out']);
+    expect((await plainState(port, await port.ourCells())).live).toEqual(['Out']);
   });
 
   it('that the host has lost are entered anew', async () => {
     await port.write('Out!A2', [[{ formula: '=_xldudf_DUTY_ASSIGN(In!A1:B2,In!D1:E2)' }]]);
-    expect((await plainState(port)).lost).toHaveLength(1);
+    expect((await plainState(port, await port.ourCells())).lost).toHaveLength(1);
     expect(await repair(port)).toBe(1);
-    expect((await plainState(port)).lost).toEqual([]);
+    expect((await plainState(port, await port.ourCells())).lost).toEqual([]);
     expect(((await shown()) as unknown[][])[1]).toEqual(['Choir', '=Ann', null, null]);
   });
 

@@ -12,6 +12,7 @@ export class FakeExcel {
   readonly names = new Map<string, { sheet: string; zone: Zone } | null>();
   /** Tables by name, headings included. */
   readonly tables = new Map<string, { sheet: string; zone: Zone }>();
+  calculation = { calculationMode: 'Automatic', calculationState: 'Done' };
   selected = { sheet: 'Sheet1', zone: parseZone('A1')! };
   readonly changed = new Set<() => unknown>();
   readonly selectionChanged = new Set<() => unknown>();
@@ -31,6 +32,9 @@ export class FakeExcel {
           return result;
         },
         CalculationType: { full: 'Full' },
+        CalculationMode: { manual: 'Manual' },
+        CalculationState: { pending: 'Pending' },
+        SpecialCellType: { formulas: 'Formulas' },
         ConditionalFormatType: { containsText: 'ContainsText' },
         ConditionalTextOperator: { beginsWith: 'BeginsWith' },
       },
@@ -122,7 +126,7 @@ class FakeWorkbook {
   readonly worksheets: FakeSheets;
   readonly names: Loadable;
   readonly tables: Loadable;
-  readonly application = { calculate: () => this.#excel.changed.forEach((listener) => void listener()) };
+  readonly application;
   readonly onSelectionChanged;
   readonly #context: FakeContext;
   readonly #excel: FakeExcel;
@@ -132,6 +136,9 @@ class FakeWorkbook {
     this.#excel = context.excel;
     const { names } = context.excel;
     this.worksheets = new FakeSheets(context);
+    this.application = Object.assign(new Loadable(context, () => ({ ...context.excel.calculation })), {
+      calculate: () => this.#excel.changed.forEach((listener) => void listener()),
+    });
     const item = (name: string): object => {
       const found = names.get(name.toLowerCase());
       const range = found === undefined || found === null ? null : new FakeRange(context, found.sheet, found.zone);
@@ -241,12 +248,24 @@ class FakeSheet extends Loadable {
     this.#name = name;
   }
 
-  getRange(cells: string): FakeRange {
-    return new FakeRange(this.context, this.#name, parseZone(cells)!);
+  /** Without cells: the whole sheet, of which only the formulas are ever asked for. */
+  getRange(cells?: string): FakeRange | { getSpecialCellsOrNullObject: (kind: string) => Loadable } {
+    if (cells !== undefined) return new FakeRange(this.context, this.#name, parseZone(cells)!);
+    return { getSpecialCellsOrNullObject: (kind) => this.#formulas(kind) };
   }
 
-  getCell(row: number, column: number): FakeRange {
-    return this.getRangeByIndexes(row, column, 1, 1);
+  #formulas(kind: string): Loadable {
+    if (kind !== 'Formulas') throw new Error(`InvalidArgument: ${kind}`);
+    const { excel } = this.context;
+    const used = excel.used(this.#name);
+    const cells: FakeRange[] = [];
+    for (let row = used?.top ?? 1; row <= (used?.bottom ?? 0); row++) {
+      for (let column = used!.left; column <= used!.right; column++) {
+        if (String(excel.at(this.#name, row, column)).startsWith('=')) cells.push(this.getRangeByIndexes(row, column, 1, 1));
+      }
+    }
+    const areas = new Loadable(this.context, () => ({ items: cells }));
+    return Object.assign(new Loadable(this.context, () => nullable(cells.length === 0)), { areas });
   }
 
   getRangeByIndexes(row: number, column: number, rows: number, columns: number): FakeRange {

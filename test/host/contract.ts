@@ -96,6 +96,8 @@ export function describeWorkbookPort(name: string, makeHarness: () => Harness): 
       const ours = (await port.ourCells()).filter(({ address }) => address.startsWith(`${sheet}!`));
       expect(ours.map(({ address }) => address)).toEqual([`${sheet}!C2`]);
       expect(ours[0].formula.replaceAll(' ', '')).toBe('=DUTY.FINDINGS(A1:B2,3)');
+      expect(await port.shownBy([`${sheet}!C2`])).toHaveLength(1);
+      expect(await port.calculation()).toEqual({ isManual: false, isPending: false });
       await port.write(`${sheet}!C2`, [[null]]);
       expect((await port.ourCells()).filter(({ address }) => address.startsWith(`${sheet}!`))).toEqual([]);
     });

@@ -59,4 +59,10 @@ describe('tables and names of Excel', () => {
     expect((await port.read('Plan'))!.address).toBe(`${sheet}!A1:A2`);
     expect((await port.read('People'))!.address).toBe('Sheet1!D1:E3');
   });
+
+  it('tell how it stands with the calculation', async () => {
+    const { excel, port } = await workbook();
+    excel.calculation = { calculationMode: 'Manual', calculationState: 'Pending' };
+    expect(await port.calculation()).toEqual({ isManual: true, isPending: true });
+  });
 });

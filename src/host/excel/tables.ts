@@ -1,5 +1,5 @@
 import { formatAddress, formatZone, parseAddress, parseZone } from '../address';
-import { ALARM, callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft } from '../port';
+import { ALARM, firstBlankRow, type Block, type DraftCell, type SheetDraft } from '../port';
 import { regionsOf, roomBelow } from '../regions';
 import { freeSheetName } from '../sheetNames';
 import { find, WITH_HEADINGS } from './find';
@@ -9,13 +9,8 @@ const TITLE = { size: 14, colour: '#1f5a4c' };
 /** Points a character takes, about. */
 const CHARACTER = 6;
 
-/** The formula of a cell, or null. A text that begins with `=` is told as its own formula; no formula shows itself. */
-export function formulaIn(content: unknown, value: unknown): string | null {
-  return typeof content === 'string' && content.startsWith('=') && content !== value ? content : null;
-}
-
 /** Blank cells come as ''. */
-function toValues(values: readonly (readonly unknown[])[]): unknown[][] {
+export function toValues(values: readonly (readonly unknown[])[]): unknown[][] {
   return values.map((row) => row.map((cell) => (cell === '' ? null : cell)));
 }
 
@@ -31,7 +26,8 @@ function blockOf(range: Excel.Range, name: string | null): Block {
   return { address: blockAddress(range), name, values: toValues(range.values) };
 }
 
-function blockAddress(range: Excel.Range): string {
+/** The address of a range as formulas write it. */
+export function blockAddress(range: Excel.Range): string {
   const { sheet, cell } = parseAddress(range.address)!;
   return formatAddress({ sheet, cell });
 }
@@ -138,37 +134,6 @@ export class ExcelTables {
       }
       await context.sync();
       return made.map(({ sheet }) => sheet.name);
-    });
-  }
-
-  async ourCells(): Promise<OurCell[]> {
-    return Excel.run(async (context) => {
-      const { worksheets } = context.workbook;
-      worksheets.load('items/name');
-      await context.sync();
-      const used = worksheets.items.map((sheet) => ({ sheet, range: sheet.getUsedRangeOrNullObject().load('address, formulas, values') }));
-      await context.sync();
-      const found = used.filter(({ range }) => !range.isNullObject).flatMap(({ sheet, range }) => {
-        const zone = parseZone(parseAddress(range.address)!.cell)!;
-        return (range.formulas as unknown[][]).flatMap((row, r) =>
-          row.flatMap((content, c) => {
-            const formula = formulaIn(content, range.values[r][c]);
-            return formula !== null && callsUs(formula) ? [{ formula, cell: sheet.getCell(zone.top + r, zone.left + c) }] : [];
-          }),
-        );
-      });
-      const spills = Office.context.requirements.isSetSupported('ExcelApi', '1.12');
-      const loaded = found.map(({ formula, cell }) => ({
-        formula,
-        cell: cell.load('address, values'),
-        spill: spills ? cell.getSpillingToRangeOrNullObject().load('values') : null,
-      }));
-      await context.sync();
-      return loaded.map(({ formula, cell, spill }) => ({
-        address: blockOf(cell, null).address,
-        formula,
-        values: toValues(spill === null || spill.isNullObject ? cell.values : spill.values),
-      }));
     });
   }
 }

@@ -2,6 +2,7 @@ import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, pars
 import { callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft } from '../port';
 import { regionAt, regionsOf, roomBelow, type Zone } from '../regions';
 import { freeSheetName } from '../sheetNames';
+import type { Range } from '../../sheet/range';
 import type { Engine, EngineModel, EngineZone } from './engine';
 import { literal } from './literal';
 import { alarmStep } from './alarms';
@@ -107,12 +108,22 @@ export class EngineTables {
         const formula = cell.isFormula ? (cell.compiledFormula?.toFormulaString(getters) ?? '') : '';
         if (!callsUs(formula)) return [];
         const position = getters.getCellPosition(cell.id);
-        const own = { top: position.row, bottom: position.row, left: position.col, right: position.col };
-        const zone = getters.getSpreadZone(position) ?? own;
-        const address = formatAddress({ sheet: getters.getSheetName(sheetId), cell: formatZone(own) });
-        return [{ address, formula, values: this.#block(sheetId, zone).values }];
+        const address = formatAddress({ sheet: getters.getSheetName(sheetId), cell: `${columnLetters(position.col)}${position.row + 1}` });
+        const { value } = getters.getEvaluatedCell(position);
+        return [{ address, formula, value: value === '' ? null : value }];
       }),
     );
+  }
+
+  /** What a formula shows with all it spills over. */
+  shownBy(address: string): Range {
+    const { getters } = this.#model;
+    const parsed = parseAddress(address);
+    const cell = parsed === null ? null : parseCell(parsed.cell);
+    const sheetId = parsed === null ? undefined : getters.getSheetIdByName(parsed.sheet);
+    if (cell === null || sheetId === undefined) return [[null]];
+    const own = { top: cell.row, bottom: cell.row, left: cell.column, right: cell.column };
+    return this.#block(sheetId, getters.getSpreadZone({ sheetId, row: cell.row, col: cell.column }) ?? own).values;
   }
 
   #enlarge(sheetId: string, rows: number, columns: number): void {

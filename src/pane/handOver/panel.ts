@@ -4,7 +4,7 @@ import { makeLive, makePlain, plainState, repair, type Exchange } from '../../de
 import type { Journal } from '../../functions/journal';
 import { formatAddress, parseAddress } from '../../host/address';
 import type { WorkbookPort } from '../../host/port';
-import { counted } from '../model';
+import { counted } from '../words';
 import { liveCases, Panel, type LiveCase } from '../panel';
 
 const MAKE = 'Make the sheets to hand over';
@@ -20,7 +20,7 @@ export class HandOverPanel extends Panel {
   }
 
   protected override async look(): Promise<void> {
-    const { live, plain, lost } = await plainState(this.port);
+    const { live, plain, lost } = await plainState(this.port, this.ours);
     [this.#live, this.#plain, this.#lost] = [live, plain, lost.length];
   }
 

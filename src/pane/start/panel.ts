@@ -31,7 +31,7 @@ export class StartPanel extends Panel {
   protected override async look(): Promise<void> {
     if (!this.#isOpen && this.journal.calls().length > 0) return;
     // What our formulas spill looks like tables too.
-    const answers = new Set((await this.port.ourCells()).map(({ address }) => address));
+    const answers = new Set(this.ours.map(({ address }) => address));
     const blocks = joined(await this.port.blocks()).filter(({ address }) => ![...answers].some((cell) => isIn(cell, address)));
     this.#proposed = propose(blocks);
     const people = this.#proposed.get('people');
@@ -52,7 +52,7 @@ export class StartPanel extends Panel {
   #toggle(isOpen: boolean): void {
     if (isOpen === this.#isOpen) return;
     this.#isOpen = isOpen;
-    void this.refresh();
+    void this.refresh(this.ours);
   }
 
   #bodyView(): TemplateResult {

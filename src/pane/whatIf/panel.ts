@@ -5,7 +5,7 @@ import type { Journal } from '../../functions/journal';
 import type { Solved } from '../../functions/solved';
 import type { WorkbookPort } from '../../host/port';
 import { nameKey } from '../../sheet/name';
-import { counted } from '../model';
+import { counted } from '../words';
 import { liveCases, Panel, type LiveCase } from '../panel';
 
 /** Options shown before the rest is asked for. */
