@@ -8,7 +8,7 @@ import type { OurCell, WorkbookPort } from '../host/port';
 import { freshnessOf, type Freshness } from './freshness';
 import { paneModel, spokenSummary } from './model';
 import { STYLE } from './style';
-import { paneView, type Actions } from './view';
+import { paneView, partsView, type Actions } from './view';
 import { CAUTION } from '../functions/caution';
 import { HandOverPanel } from './handOver/panel';
 import type { Panel } from './panel';
@@ -44,6 +44,7 @@ class Pane {
   readonly element = document.createElement('main');
   readonly #port: WorkbookPort;
   readonly #journal: Journal;
+  readonly #parts = document.createElement('nav');
   readonly #body = document.createElement('div');
   readonly #live = document.createElement('p');
   readonly #caution = document.createElement('p');
@@ -66,7 +67,9 @@ class Pane {
     this.#caution.textContent = CAUTION;
     this.#begin = new StartPanel(port, journal);
     this.#panels = [new WhatIfPanel(port, journal), new PicturesPanel(port, journal), new HandOverPanel(port, journal), this.#begin];
-    this.element.append(this.#body, ...this.#panels.map(({ element }) => element), this.#caution, this.#live);
+    this.#parts.className = 'dp-parts';
+    this.#parts.setAttribute('aria-label', 'Parts of this pane');
+    this.element.append(this.#parts, this.#body, ...this.#panels.map(({ element }) => element), this.#caution, this.#live);
   }
 
   begin(): void {
@@ -124,6 +127,8 @@ class Pane {
       await panel.refresh(this.#ours);
       if (turn !== this.#refreshes) return;
     }
+    const parts = [{ title: 'Cases', element: this.#body }, ...this.#panels.filter(({ element: { hidden } }) => !hidden)];
+    render(partsView(parts), this.#parts);
   }
 }
 

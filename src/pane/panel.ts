@@ -6,6 +6,7 @@ import type { OurCell, WorkbookPort } from '../host/port';
 
 /** A part of the pane that draws itself, looks at the workbook and acts on it. */
 export abstract class Panel {
+  readonly title: string;
   readonly element: HTMLElement;
   protected readonly port: WorkbookPort;
   protected readonly journal: Journal;
@@ -16,6 +17,7 @@ export abstract class Panel {
   #said = '';
 
   constructor(title: string, port: WorkbookPort, journal: Journal) {
+    this.title = title;
     this.port = port;
     this.journal = journal;
     this.element = document.createElement('section');

@@ -39,6 +39,16 @@ export function paneView(model: PaneModel, freshness: Freshness | null, opened: 
   `;
 }
 
+/** The way to the parts of the pane below the cases; the pane is long where there is much to tell. */
+export function partsView(parts: readonly { readonly title: string; readonly element: HTMLElement }[]): TemplateResult {
+  const go = (element: HTMLElement) => (): void => {
+    element.tabIndex = -1;
+    element.focus({ preventScroll: true });
+    element.scrollIntoView({ block: 'start' });
+  };
+  return html`${parts.map(({ title, element }) => html`<button type="button" @click=${go(element)}>${title}</button>`)}`;
+}
+
 function emptyView(): TemplateResult {
   return html`
     <section class="dp-case">
@@ -135,7 +145,7 @@ function section<T>(
 
 function shortView({ duty, seats }: CaseView['short'][number]): TemplateResult {
   return html`
-    <li class="dp-item">
+    <li class="dp-item dp-row">
       <span class="dp-name dp-clip" dir="auto">${duty}</span>
       <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')} short</span>
     </li>
@@ -145,8 +155,10 @@ function shortView({ duty, seats }: CaseView['short'][number]): TemplateResult {
 function bottleneckView({ number, seats, reason }: CaseView['bottlenecks'][number]): TemplateResult {
   return html`
     <li class="dp-item">
-      <span class="dp-name">Bottleneck ${number}</span>
-      <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')}</span>
+      <div class="dp-row">
+        <span class="dp-name">Bottleneck ${number}</span>
+        <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')}</span>
+      </div>
       <p class="dp-soft dp-clip" dir="auto">${reason}</p>
     </li>
   `;
@@ -155,8 +167,10 @@ function bottleneckView({ number, seats, reason }: CaseView['bottlenecks'][numbe
 function fragileView({ person, seats, duties }: NonNullable<CaseView['fragile']>[number]): TemplateResult {
   return html`
     <li class="dp-item">
-      <span class="dp-name dp-clip" dir="auto">${person}</span>
-      <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')}</span>
+      <div class="dp-row">
+        <span class="dp-name dp-clip" dir="auto">${person}</span>
+        <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')}</span>
+      </div>
       <p class="dp-soft dp-clip" dir="auto">${duties}</p>
     </li>
   `;

@@ -158,4 +158,22 @@ describe('the workbook port of the workbench', () => {
     expect(model.getters.getActivePosition()).toEqual({ sheetId, col: 1, row: 1 });
     expect(model.getters.isSheetVisible(sheetId)).toBe(true);
   });
+
+  it('takes sheets back in one step of undo, with their names, and brings them again in one', async () => {
+    const port = new WorkbenchWorkbook(model, engine);
+    const before = await port.sheetNames();
+    const draft = { rows: [['Duty', 'Need'], ['Choir', 2]], headingRows: [0], titleRows: [0], widths: [20, 8], alarms: ['A1:A2'] };
+    await port.addSheets([
+      { ...draft, name: 'One', names: [{ name: 'First', cells: 'A1:B2' }], wholes: [{ column: 1, from: 1, least: 0 }] },
+      { ...draft, name: 'Two', names: [{ name: 'Second', cells: 'A1:B2' }], rows: [[{ formula: '=ROWS(First)' }]], headingRows: [] },
+    ]);
+    const after = await port.sheetNames();
+    model.dispatch('REQUEST_UNDO');
+    expect(await port.sheetNames()).toEqual(before);
+    expect(await port.read('First')).toBeNull();
+    model.dispatch('REQUEST_REDO');
+    expect(await port.sheetNames()).toEqual(after);
+    expect((await port.read('Two!A1'))!.values).toEqual([[2]]);
+    expect((await port.read('Second'))!.address).toBe('Two!A1:B2');
+  });
 });

@@ -27,7 +27,7 @@ function blockOf(range: Excel.Range, name: string | null): Block {
 }
 
 /** The address of a range as formulas write it. */
-export function blockAddress(range: Excel.Range): string {
+function blockAddress(range: Excel.Range): string {
   const { sheet, cell } = parseAddress(range.address)!;
   return formatAddress({ sheet, cell });
 }

@@ -5,7 +5,7 @@ import { freeSheetName } from '../sheetNames';
 import type { Range } from '../../sheet/range';
 import type { Engine, EngineModel, EngineZone } from './engine';
 import { literal } from './literal';
-import { alarmStep } from './alarms';
+import { addAlarm } from './alarms';
 import { runBulk } from './bulk';
 
 const HEADING = { bold: true, fillColor: '#e3efe9' };
@@ -83,21 +83,12 @@ export class EngineTables {
   addSheets(drafts: readonly SheetDraft[]): string[] {
     const { getters } = this.#model;
     const taken = new Set(getters.getSheetIds().map((id) => getters.getSheetName(id).toLowerCase()));
-    // Names first: a formula on one sheet may use what another holds.
     const made = drafts.map((draft) => ({ draft, name: freeSheetName(draft.name, taken), sheetId: crypto.randomUUID() }));
-    for (const { draft, name, sheetId } of made) {
-      const columns = Math.max(0, ...draft.rows.map((row) => row.length)) + SPARE_COLUMNS;
-      const position = getters.getSheetIds().length;
-      this.#model.dispatch('CREATE_SHEET', { sheetId, name, position });
-      this.#enlarge(sheetId, draft.rows.length + SPARE_ROWS, columns);
-      for (const { name: own, cells } of draft.names ?? []) {
-        const range = getters.getRangeDataFromZone(sheetId, parseZone(cells)!);
-        // Without the sheet the engine measures the range against the sheet in view.
-        this.#model.dispatch('CREATE_NAMED_RANGE', { sheetId, name: own, ranges: [range] });
-      }
-      this.#dress(sheetId, draft);
-    }
-    for (const { draft, sheetId } of made) this.#put(sheetId, 0, 0, draft.rows, true);
+    runBulk(this.#model, () => {
+      // Names first: a formula on one sheet may use what another holds.
+      for (const { draft, name, sheetId } of made) this.#makeSheet(sheetId, name, draft);
+      for (const { draft, sheetId } of made) this.#put(sheetId, 0, 0, draft.rows, true);
+    });
     return made.map(({ name }) => name);
   }
 
@@ -126,6 +117,19 @@ export class EngineTables {
     return this.#block(sheetId, getters.getSpreadZone({ sheetId, row: cell.row, col: cell.column }) ?? own).values;
   }
 
+  #makeSheet(sheetId: string, name: string, draft: SheetDraft): void {
+    const { getters } = this.#model;
+    const columns = Math.max(0, ...draft.rows.map((row) => row.length)) + SPARE_COLUMNS;
+    this.#model.dispatch('CREATE_SHEET', { sheetId, name, position: getters.getSheetIds().length });
+    this.#enlarge(sheetId, draft.rows.length + SPARE_ROWS, columns);
+    for (const { name: own, cells } of draft.names ?? []) {
+      const range = getters.getRangeDataFromZone(sheetId, parseZone(cells)!);
+      // Without the sheet the engine measures the range against the sheet in view.
+      this.#model.dispatch('CREATE_NAMED_RANGE', { sheetId, name: own, ranges: [range] });
+    }
+    this.#dress(sheetId, draft);
+  }
+
   #enlarge(sheetId: string, rows: number, columns: number): void {
     const { getters } = this.#model;
     const about = { sheetId, sheetName: getters.getSheetName(sheetId), position: 'after' };
@@ -138,18 +142,19 @@ export class EngineTables {
 
   #put(sheetId: string, top: number, left: number, cells: readonly (readonly DraftCell[])[], skipsBlanks = false): void {
     const locale = this.#model.getters.getLocale();
-    const steps = cells.flatMap((row, r) =>
-      row.flatMap((cell, c) => {
-        if (cell === null && skipsBlanks) return [];
-        const content = cell !== null && typeof cell === 'object' ? cell.formula : literal(cell, this.#engine, locale);
-        return [{ command: 'UPDATE_CELL', payload: { sheetId, row: top + r, col: left + c, content } }];
-      }),
-    );
-    runBulk(this.#model, steps);
+    runBulk(this.#model, () => {
+      cells.forEach((row, r) =>
+        row.forEach((cell, c) => {
+          if (cell === null && skipsBlanks) return;
+          const content = cell !== null && typeof cell === 'object' ? cell.formula : literal(cell, this.#engine, locale);
+          this.#model.dispatch('UPDATE_CELL', { sheetId, row: top + r, col: left + c, content });
+        }),
+      );
+    });
   }
 
   #dress(sheetId: string, { rows, headingRows = [], titleRows = [], widths = [], wholes = [], alarms = [] }: SheetDraft): void {
-    runBulk(this.#model, alarms.map((cell) => alarmStep(this.#model.getters, sheetId, cell)));
+    for (const cell of alarms) addAlarm(this.#model, sheetId, cell);
     const look = (lines: readonly number[], style: object): void => {
       const filled = lines.filter((row) => rows[row].length > 0);
       const target = filled.map((row) => ({ top: row, bottom: row, left: 0, right: rows[row].length - 1 }));
