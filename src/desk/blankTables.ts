@@ -71,7 +71,7 @@ const HEADING_ROW = 2;
  */
 export async function blankDrafts(port: WorkbookPort): Promise<SheetDraft[]> {
   const inputs = await tableSheet(port, 'Inputs', TABLES);
-  return [inputs, ...answerDrafts(inputs.names.map(({ name }) => name))];
+  return [inputs, ...answerDrafts(inputs.names.map(({ name }) => name), { rows: 2 * ROOM, people: ROOM / 2, isLarge: false })];
 }
 
 /** An empty table for rules alone, for a case that has none: decisions need a place to stand in. */

@@ -108,6 +108,8 @@ export interface SheetDraft {
   readonly widths?: readonly number[];
   /** Cells such as `B9`, or rectangles of them, that are drawn as an alarm while their text begins as `ALARM` does. */
   readonly alarms?: readonly string[];
+  /** Rows and columns its formulas may come to fill, for a host whose sheets are no larger than they must be. */
+  readonly room?: { readonly rows: number; readonly columns: number };
   /** Names for rectangles of this sheet, such as `{ name: 'Pairs', cells: 'A2:C40' }`. */
   readonly names?: readonly { readonly name: string; readonly cells: string }[];
   /** Columns, from 0, in which only whole numbers from `least` on may be typed, below the row `from`. */

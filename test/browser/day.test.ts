@@ -95,8 +95,8 @@ describe('a day at the desk', () => {
     await desk.pane.getByText('Understood: 6 pairs, 3 people, 4 duties with 4 seats.').waitFor();
     await desk.pane.getByRole('button', { name: 'Put the answers on new sheets' }).click();
     await desk.pane.getByText('of 4 seats covered').waitFor();
-    await desk.pane.getByText('The answers are on Results and Why').waitFor();
-    expect(await desk.sheets()).toEqual(['who', 'staff', 'current plan', 'Results', 'Why', 'Rules']);
+    await desk.pane.getByText('The answers are on Results, Grid and Why').waitFor();
+    expect(await desk.sheets()).toEqual(['who', 'staff', 'current plan', 'Results', 'Grid', 'Why', 'Rules']);
 
     // A colleague drops out: the moves to the new plan.
     expect(await desk.valueAt('Why!A3')).toBe('No moves: the current plan is the best plan');

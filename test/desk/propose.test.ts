@@ -47,7 +47,7 @@ describe('which table is which', () => {
   it('is looked at before anything is written', async () => {
     const port = new MemoryWorkbook();
     await port.addSheets([{ name: 'A', rows: [...PAIRS, ['Flute', 'Anne', 1]] }, { name: 'B', rows: PEOPLE }, { name: 'C', rows: DUTIES }]);
-    expect(preview(propose(await port.blocks()))).toEqual({ counts: ['3 pairs', '3 people', '2 duties with 2 seats'], faults: [], findings: 2, isLarge: false });
+    expect(preview(propose(await port.blocks()))).toEqual({ counts: ['3 pairs', '3 people', '2 duties with 2 seats'], faults: [], findings: 2, size: { rows: 3, people: 3, isLarge: false } });
     await port.write('B!B2', [['two']]);
     expect(preview(propose(await port.blocks())).faults[0]).toMatch(/^People table, row 2/u);
   });
@@ -58,7 +58,7 @@ describe('empty tables', () => {
     const port = new MemoryWorkbook();
     await port.addSheets([{ name: 'Old', rows: PAIRS, names: [{ name: 'Pairs', cells: 'A1:C4' }] }]);
     const names = await port.addSheets(await blankDrafts(port));
-    expect(names).toEqual(['Inputs', 'Results', 'Why']);
+    expect(names).toEqual(['Inputs', 'Results', 'Grid', 'Why']);
     expect((await port.read('Pairs'))!.address).toBe('Old!A1:C4');
     expect((await port.read('Pairs2'))!.values[0]).toEqual(['Duty', 'Person', 'Rank']);
     const formulas = (await port.ourCells()).map(({ formula }) => formula);

@@ -7,12 +7,10 @@ import type { Engine, EngineModel, EngineZone } from './engine';
 import { literal } from './literal';
 import { addAlarm } from './alarms';
 import { runBulk } from './bulk';
+import { widthInPixels } from './widths';
 
 const HEADING = { bold: true, fillColor: '#e3efe9' };
 const TITLE = { bold: true, fontSize: 14, textColor: '#1f5a4c' };
-/** Pixels a character takes, about, and beside the text. */
-const CHARACTER = 7;
-const MARGIN = 12;
 /** Rows and columns of a new sheet beyond what is written, for spills. */
 const SPARE_ROWS = 400;
 const SPARE_COLUMNS = 20;
@@ -119,9 +117,10 @@ export class EngineTables {
 
   #makeSheet(sheetId: string, name: string, draft: SheetDraft): void {
     const { getters } = this.#model;
-    const columns = Math.max(0, ...draft.rows.map((row) => row.length)) + SPARE_COLUMNS;
+    const columns = Math.max(0, ...draft.rows.map((row) => row.length));
+    const { room = { rows: 0, columns: 0 } } = draft;
     this.#model.dispatch('CREATE_SHEET', { sheetId, name, position: getters.getSheetIds().length });
-    this.#enlarge(sheetId, draft.rows.length + SPARE_ROWS, columns);
+    this.#enlarge(sheetId, Math.max(draft.rows.length, room.rows) + SPARE_ROWS, Math.max(columns, room.columns) + SPARE_COLUMNS);
     for (const { name: own, cells } of draft.names ?? []) {
       const range = getters.getRangeDataFromZone(sheetId, parseZone(cells)!);
       // Without the sheet the engine measures the range against the sheet in view.
@@ -164,7 +163,7 @@ export class EngineTables {
     look(titleRows, TITLE);
     const sheetName = this.#model.getters.getSheetName(sheetId);
     widths.forEach((width, column) => {
-      const size = width * CHARACTER + MARGIN;
+      const size = widthInPixels(width);
       this.#model.dispatch('RESIZE_COLUMNS_ROWS', { sheetId, sheetName, dimension: 'COL', elements: [column], size });
     });
     for (const { column, from, least } of wholes) {

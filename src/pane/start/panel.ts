@@ -115,21 +115,26 @@ export class StartPanel extends Panel {
   async #answer(chosen: ReadonlyMap<Role, Candidate>): Promise<string> {
     const rules = chosen.has('rules') ? null : await blankRules(this.port);
     const given = ROLES.map((role) => chosen.get(role)?.argument ?? (role === 'rules' ? (rules?.reference ?? '') : ''));
-    const { isLarge } = preview(chosen);
-    const answers = answerDrafts(given, isLarge);
+    const { size } = preview(chosen);
+    const answers = answerDrafts(given, size);
     const made = await this.port.addSheets(rules === null ? answers : [...answers, rules]);
     await this.port.select(formatAddress({ sheet: made[0], cell: 'A1' }));
     const names = made.slice(0, answers.length);
-    const left = isLarge ? ' DUTY.REMEDIES and DUTY.ABSENCES were left out: in a case of this size they would slow every change.' : '';
+    const left = size.isLarge ? ' DUTY.GRID, DUTY.REMEDIES and DUTY.ABSENCES were left out: in a case of this size they would slow every change.' : '';
     const place = rules === null ? '' : ` What you decide is written on ${made[answers.length]}.`;
-    return `The answers are on ${names.join(' and ')}. They follow every change of your tables.${place}${left}`;
+    return `The answers are on ${inWords(names)}. They follow every change of your tables.${place}${left}`;
   }
 
   async #layOut(): Promise<string> {
     const names = await this.port.addSheets(await blankDrafts(this.port));
     await this.port.select(formatAddress({ sheet: names[0], cell: 'A4' }));
-    return `Fill the tables on ${names[0]}; the answers appear on ${names.slice(1).join(' and ')}.`;
+    return `Fill the tables on ${names[0]}; the answers appear on ${inWords(names.slice(1))}.`;
   }
+}
+
+/** `Results, Grid and Why`. */
+function inWords(names: readonly string[]): string {
+  return names.length < 2 ? names.join('') : `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`;
 }
 
 function nameOf({ block, isGrid }: Candidate): string {
