@@ -68,7 +68,7 @@ export class HandOverPanel extends Panel {
   async #handOver({ solved }: LiveCase): Promise<string> {
     const names = await this.port.addSheets(handOverSheets(solved, today(), await freePrefix(this.port)));
     await this.port.select(formatAddress({ sheet: names[0], cell: 'A1' }));
-    return `Made ${counted(names.length, 'sheet', 'sheets')}: ${names.join(', ')}. To send them, save a copy of the workbook with only these.`;
+    return `Made ${counted(names.length, 'sheet', 'sheets')}: ${names.join(', ')}. To send them, select them together and move or copy them to a new book.`;
   }
 }
 
