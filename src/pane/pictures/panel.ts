@@ -2,7 +2,7 @@ import { html, nothing, svg, type TemplateResult } from 'lit-html';
 import type { Journal } from '../../functions/journal';
 import type { WorkbookPort } from '../../host/port';
 import { counted } from '../model';
-import { liveCases, Panel } from '../panel';
+import { CasePanel } from '../casePanel';
 import { knotPictures, loadPicture, type KnotPicture, type LoadBar, type LoadPicture } from './model';
 
 /** Sizes of a drawing, in units of its view box. */
@@ -15,19 +15,19 @@ const LETTERS = 17;
 const END = 5;
 
 /** Drawings of the bottlenecks and of what everyone holds, each with the same in words. */
-export class PicturesPanel extends Panel {
+export class PicturesPanel extends CasePanel {
   constructor(port: WorkbookPort, journal: Journal) {
     super('Pictures', port, journal);
   }
 
   protected override view(): TemplateResult {
-    const [first] = liveCases(this.journal);
-    this.element.hidden = first === undefined;
-    if (first === undefined) return html``;
+    const { live } = this;
+    this.element.hidden = live === undefined;
+    if (live === undefined) return html``;
     return html`
       <details>
         <summary>Pictures</summary>
-        ${knotPictures(first.solved).map(knotView)} ${loadView(loadPicture(first.solved))}
+        ${this.choiceView()} ${knotPictures(live.solved).map(knotView)} ${loadView(loadPicture(live.solved))}
       </details>
     `;
   }

@@ -1,0 +1,59 @@
+import { LAST_PRIORITY, type Case } from '../cover/case';
+import type { Move } from '../cover/steps';
+import type { Trial } from '../cover/trials';
+import { joinNames } from '../sheet/write';
+
+/** Said of what costs nothing at all. */
+export const FREE = 'costs no seat';
+
+/** Duties named before the rest is only counted. */
+const NAMED = 3;
+
+/** What holding a pair would cost, in a few words. */
+export function trialWords(kase: Case, trial: Trial): string {
+  const passes = [trial.passesMaximum ? 'passes the maximum' : '', trial.passesNeed ? 'is more than the duty needs' : ''];
+  const missed = trial.missed > 0 ? 'misses a minimum by 1 seat more' : '';
+  return [coverWords(kase, trial), missed, ...passes].filter((words) => words !== '').join('; ');
+}
+
+function coverWords({ duties }: Case, { loses, gains, worse, better }: Trial): string {
+  const names = (list: readonly number[], priority?: number): string =>
+    joinNames(list.filter((d) => priority === undefined || duties[d].priority === priority).map((d) => duties[d].name), NAMED);
+  if (worse !== null && better !== null) {
+    return `costs 1 seat ${ofPriority(worse)} (${names(loses, worse)}) for 1 ${ofPriority(better)} (${names(gains, better)})`;
+  }
+  if (worse !== null) {
+    const isOnly = duties.every(({ priority }) => priority === worse);
+    const others = names(gains, worse);
+    return `costs 1 seat${isOnly ? '' : `, ${ofPriority(worse)}`}: ${names(loses, worse)}${others === '' ? '' : `, while ${others} gains one`}`;
+  }
+  if (better !== null) return `covers 1 seat more: ${names(gains, better)}`;
+  return loses.length === 0 ? FREE : `${FREE}, but leaves ${names(loses)} short instead of ${names(gains)}`;
+}
+
+function ofPriority(priority: number): string {
+  return priority === LAST_PRIORITY ? 'without priority' : `of priority ${priority}`;
+}
+
+/** More than any priority, which is at most a million and one. */
+const PRIORITIES = 2 ** 21;
+
+/** More than anything that passes no limit. */
+const LIMIT = 8 * PRIORITIES;
+
+/**
+ * How dear a trial is, for putting options in order: nothing at all, then other duties short, minimums
+ * missed, seats lost (the least urgent first, and first for another seat), and last what passes a limit.
+ */
+export function trialCost({ loses, worse, better, missed, passesNeed, passesMaximum }: Trial): number {
+  const limits = (passesNeed ? LIMIT : 0) + (passesMaximum ? LIMIT : 0);
+  const cover = worse === null ? 0 : 8 * (PRIORITIES - worse) + (better === null ? 4 : 0);
+  return limits + cover + (missed > 0 ? 2 : 0) + (loses.length > 0 ? 1 : 0);
+}
+
+/** A move of a seat in words. */
+export function moveWords({ duties, people }: Case, { duty, from, to }: Move): string {
+  const what = duties[duty].name;
+  if (from === null) return `${people[to!].name} takes ${what}`;
+  return to === null ? `${people[from].name} puts ${what} down` : `${people[from].name} gives ${what} to ${people[to].name}`;
+}
