@@ -1,8 +1,8 @@
-import { pathOf, shortestPaths, type Direction } from '../flow/paths';
 import type { Case } from './case';
-import { entries, exits, STAY, type Gates, type Way } from './gates';
-import { planOf, type Plan } from './plan';
+import { readPlan } from './coverBest';
+import type { Plan } from './plan';
 import type { Solution } from './solve';
+import { STAY, waysAtNode, waysAtTerminal, type Way, type Ways } from './ways';
 
 /**
  * What follows where a person is made to hold a pair that is open and that the plan at hand does not
@@ -26,7 +26,7 @@ export interface Trial {
   readonly passesNeed: boolean;
   /** True where Fixed seats leave no place of the person's maximum. */
   readonly passesMaximum: boolean;
-  /** The half arcs along which one unit of flow moves. */
+  /** The half arcs along which one unit of flow moves, that of the pair first. */
   readonly halves: readonly number[];
 }
 
@@ -50,10 +50,9 @@ export class Trials {
   readonly #solution: Solution;
   /** 1 for the half arcs of pairs: each of them changes a seat. */
   readonly #heavy: Uint8Array;
-  /** The duty of a node, or -1. */
-  readonly #dutyOfNode: Int32Array;
-  readonly #exits: Gates;
-  readonly #entries: Gates;
+  readonly #dutyOfNode: ReadonlyMap<number, number>;
+  readonly #exit: Ways;
+  readonly #entry: Ways;
 
   constructor(kase: Case, solution: Solution) {
     [this.#kase, this.#solution] = [kase, solution];
@@ -63,114 +62,94 @@ export class Trials {
       const half = network.position[firstPairArc + k];
       this.#heavy[half] = this.#heavy[network.mate[half]] = 1;
     });
-    this.#dutyOfNode = new Int32Array(network.nodeCount).fill(-1);
-    dutyNode.forEach((node, d) => (this.#dutyOfNode[node] = d));
-    this.#exits = exits(kase, solution, this.#heavy);
-    this.#entries = entries(kase, solution, this.#heavy);
+    this.#dutyOfNode = new Map(Array.from(dutyNode, (node, d) => [node, d]));
+    this.#exit = waysAtTerminal(kase, solution, this.#heavy, true);
+    this.#entry = waysAtTerminal(kase, solution, this.#heavy, false);
   }
 
   /** A trial for every open pair of the duty that is not held, in name order of the people. */
   ofDuty(duty: number): Trial[] {
-    const root = this.#solution.reduction.dutyNode[duty];
-    const direct = this.#waysWithin(root, 'to roots');
-    return this.#pairsWhere((i) => this.#kase.pairs.duty[i] === duty).map((k) => this.#trial(k, direct(this.#endsOf(k).to)));
+    const direct = waysAtNode(this.#solution, this.#heavy, this.#solution.reduction.dutyNode[duty], true);
+    return this.#trialsWhere((i) => this.#kase.pairs.duty[i] === duty, (_, end) => direct(end));
   }
 
   /** A trial for every open pair of the person that is not held, in name order of the duties. */
   ofPerson(person: number): Trial[] {
-    const waysFrom = new Map<number, (node: number) => Way | null>();
-    return this.#pairsWhere((i) => this.#kase.pairs.person[i] === person).map((k) => {
-      const { from, to } = this.#endsOf(k);
-      const direct = waysFrom.get(to) ?? this.#waysWithin(to, 'from roots');
-      waysFrom.set(to, direct);
-      return this.#trial(k, direct(from));
-    });
+    const waysFrom = new Map<number, Ways>();
+    return this.#trialsWhere(
+      (i) => this.#kase.pairs.person[i] === person,
+      (start, end) => {
+        const direct = waysFrom.get(end) ?? waysAtNode(this.#solution, this.#heavy, end, false);
+        waysFrom.set(end, direct);
+        return direct(start);
+      },
+    );
   }
 
   /** The plan that follows from a trial. */
-  planWith({ pair, halves }: Trial): Plan {
+  planWith({ halves }: Trial): Plan {
     const { residual, reduction } = this.#solution;
-    const { network, openPair, firstPairArc } = reduction;
     const after = residual.slice();
     for (const half of halves) {
       after[half]--;
-      after[network.mate[half]]++;
+      after[reduction.network.mate[half]]++;
     }
-    const held = [...openPair].filter((_, k) => after[network.position[firstPairArc + k]] === 0);
-    return planOf(this.#kase, [...held, pair]);
+    return readPlan(this.#kase, reduction, after);
   }
 
-  /** The pairs, as places in `openPair`, that pass a test, are not held and count like any other seat. */
-  #pairsWhere(test: (pair: number) => boolean): number[] {
+  /**
+   * Trials of the pairs that pass a test, are not held and count like any other seat.
+   *
+   * @param direct the cheapest way from the end of a pair's arc back to its start that avoids the terminal
+   */
+  #trialsWhere(test: (pair: number) => boolean, direct: (start: number, end: number) => Way | null): Trial[] {
+    const { pairs, duties } = this.#kase;
     const { residual, reduction } = this.#solution;
-    const { network, openPair, firstPairArc } = reduction;
-    const counts = (i: number): boolean => this.#kase.duties[this.#kase.pairs.duty[i]].load === 1;
-    const isHeld = (k: number): boolean => residual[network.position[firstPairArc + k]] === 0;
-    return [...openPair.keys()].filter((k) => !isHeld(k) && test(openPair[k]) && counts(openPair[k]));
+    const { network, arcs, openPair, firstPairArc } = reduction;
+    return Array.from(openPair).flatMap((pair, k) => {
+      const half = network.position[firstPairArc + k];
+      if (residual[half] === 0 || !test(pair) || duties[pairs.duty[pair]].load !== 1) return [];
+      const [start, end] = [arcs.tail[firstPairArc + k], arcs.head[firstPairArc + k]];
+      return [this.#trial(pair, half, this.#exit(end), this.#entry(start), direct(start, end))];
+    });
   }
 
-  #endsOf(k: number): { from: number; to: number } {
-    const { arcs, firstPairArc } = this.#solution.reduction;
-    return { from: arcs.tail[firstPairArc + k], to: arcs.head[firstPairArc + k] };
-  }
-
-  /** Cheapest ways between one node and all others that avoid the terminal. */
-  #waysWithin(root: number, direction: Direction): (node: number) => Way | null {
-    const { residual, reduction } = this.#solution;
-    const { network, source, sink } = reduction;
-    const paths = shortestPaths(network, residual, this.#heavy, [[root]], direction, [source, sink]);
-    return (node) => {
-      if (paths.group[node] === -1) return null;
-      return { ...STAY, weight: paths.weight[node], halves: pathOf(network, paths, node, direction) };
-    };
-  }
-
-  /** @param direct the cheapest way from the person back to the duty that avoids the terminal */
-  #trial(k: number, direct: Way | null): Trial {
+  #trial(pair: number, half: number, exit: Way | null, entry: Way | null, direct: Way | null): Trial {
     const { plan, reduction } = this.#solution;
-    const { arcs, openPair, personArc, dutyArc, classes } = reduction;
-    const pair = openPair[k];
+    const { arcs, personArc, dutyArc, classes } = reduction;
     const [duty, person] = [this.#kase.pairs.duty[pair], this.#kase.pairs.person[pair]];
     const passesNeed = arcs.capacity[dutyArc[duty]] === 0;
     const passesMaximum = arcs.capacity[personArc[person]] === 0;
-    const { from, to } = this.#endsOf(k);
-    const exit = passesMaximum ? STAY : this.#exits.way(to);
-    const entry = passesNeed ? STAY : this.#entries.way(from);
-    const { worse, better, missed, halves } = best(passesNeed || passesMaximum ? null : direct, exit, entry);
+    const way = passesNeed || passesMaximum ? null : direct;
+    const [to, from] = isBest(way, exit, entry) ? [way!, STAY] : [passesMaximum ? STAY : exit!, passesNeed ? STAY : entry!];
     // A seat outside of the network counts towards the minimum all the same.
     const outside = passesMaximum && plan.heldByPerson[person] < this.#kase.people[person].minimum ? 1 : 0;
-    const priority = (c: number): number | null => (c === -1 || worse === better ? null : classes[c].priority);
-    const changes = this.#dutyChanges(halves);
-    const passes = { passesNeed, passesMaximum };
-    return { pair, ...changes, worse: priority(worse), better: priority(better), missed: missed - outside, ...passes, halves };
+    const priority = (c: number): number | null => (to.class === from.class ? null : (classes[c]?.priority ?? null));
+    const halves = [half, ...to.halves, ...from.halves];
+    return {
+      pair,
+      ...this.#dutyChanges(halves),
+      worse: priority(to.class),
+      better: priority(from.class),
+      missed: to.missed + from.missed - outside,
+      passesNeed,
+      passesMaximum,
+      halves,
+    };
   }
 
-  /** Which duties the half arcs take a seat from, and which they give one. */
+  /** Which duties the half arcs take a seat from, and which they give one: arcs of duties but those of pairs. */
   #dutyChanges(halves: readonly number[]): { loses: number[]; gains: number[] } {
     const { endpoint, mate } = this.#solution.reduction.network;
-    const [loses, gains]: number[][] = [[], []];
-    for (const half of halves) {
-      if (this.#heavy[half] === 1) continue;
-      const [tail, head] = [this.#dutyOfNode[endpoint[mate[half]]], this.#dutyOfNode[endpoint[half]]];
-      if (tail !== -1) loses.push(tail);
-      if (head !== -1) gains.push(head);
-    }
-    return { loses, gains };
+    const dutiesAt = (end: (half: number) => number): number[] =>
+      halves.flatMap((half) => (this.#heavy[half] === 1 ? [] : (this.#dutyOfNode.get(end(half)) ?? [])));
+    return { loses: dutiesAt((half) => endpoint[mate[half]]), gains: dutiesAt((half) => endpoint[half]) };
   }
 }
 
-/** The cheaper of a way that avoids the terminal and one through it. */
-function best(direct: Way | null, exit: Way | null, entry: Way | null): Way {
-  if (exit === null || entry === null) return direct!;
-  const through: Way = {
-    worse: exit.worse,
-    better: entry.better,
-    missed: exit.missed + entry.missed,
-    weight: exit.weight + entry.weight,
-    halves: [...exit.halves, ...entry.halves],
-  };
-  if (direct === null) return through;
-  // A direct way costs nothing. One through the terminal never gains: the plan at hand is best.
-  if (through.worse !== through.better) return direct;
-  return through.missed < 0 || (through.missed === 0 && through.weight < direct.weight) ? through : direct;
+/** True where the way that avoids the terminal is no dearer than the two that meet there, which never gain: the plan at hand is best. */
+function isBest(direct: Way | null, exit: Way | null, entry: Way | null): boolean {
+  if (direct === null || exit === null || entry === null) return direct !== null;
+  const missed = exit.missed + entry.missed;
+  return exit.class !== entry.class || missed > 0 || (missed === 0 && direct.weight <= exit.weight + entry.weight);
 }

@@ -1,6 +1,7 @@
 import { LAST_PRIORITY, type Case } from '../cover/case';
 import type { Move } from '../cover/steps';
 import type { Trial } from '../cover/trials';
+import type { Solved } from '../functions/solved';
 import { joinNames } from '../sheet/write';
 
 /** Said of what costs nothing at all. */
@@ -10,10 +11,13 @@ export const FREE = 'costs no seat';
 const NAMED = 3;
 
 /** What holding a pair would cost, in a few words. */
-export function trialWords(kase: Case, trial: Trial): string {
-  const passes = [trial.passesMaximum ? 'passes the maximum' : '', trial.passesNeed ? 'is more than the duty needs' : ''];
-  const missed = trial.missed > 0 ? 'misses a minimum by 1 seat more' : '';
-  return [coverWords(kase, trial), missed, ...passes].filter((words) => words !== '').join('; ');
+export function trialWords({ case: kase, outcome: { plan } }: Solved, trial: Trial): string {
+  const [duty, person] = [kase.pairs.duty[trial.pair], kase.pairs.person[trial.pair]];
+  const words = [coverWords(kase, trial)];
+  if (trial.missed > 0) words.push('misses a minimum by 1 seat more');
+  if (trial.passesMaximum) words.push(`passes the maximum (${plan.loadByPerson[person] + 1} of ${kase.people[person].maximum})`);
+  if (trial.passesNeed) words.push(`is more than needed (${plan.heldOfDuty[duty] + 1} for ${kase.duties[duty].need})`);
+  return words.join('; ');
 }
 
 function coverWords({ duties }: Case, { loses, gains, worse, better }: Trial): string {

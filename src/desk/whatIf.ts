@@ -1,8 +1,6 @@
-import type { Case, Seat } from '../cover/case';
-import { check, type Wrong } from '../cover/check';
+import type { Seat } from '../cover/case';
 import type { Use } from '../cover/choices';
 import { PairState } from '../cover/openPairs';
-import type { Plan } from '../cover/plan';
 import { steps, type Move } from '../cover/steps';
 import type { Trial } from '../cover/trials';
 import type { Solved } from '../functions/solved';
@@ -23,8 +21,6 @@ export interface Option extends Seat {
 export interface Consequence {
   /** The moves from the plan at hand to the best one that keeps this. */
   readonly moves: readonly Move[];
-  /** Limits that it would pass, in words. */
-  readonly passes: readonly string[];
   /** Who would come below the minimum, or further below, in words. */
   readonly below: readonly string[];
 }
@@ -54,7 +50,7 @@ function optionsWhere(solved: Solved, test: (seat: Seat) => boolean, trials: rea
     const trial = trialOf.get(i) ?? null;
     // A flow without a trial would be none with this seat: what it costs is not known.
     const known = solved.isFlow && !isHeld ? null : (use?.[i] ?? null);
-    const words = trial === null ? plainWords(open.state[i], isHeld, known) : trialWords(solved.case, trial);
+    const words = trial === null ? plainWords(open.state[i], isHeld, known) : trialWords(solved, trial);
     options.push({ ...seat, isHeld, words, isOpen: open.state[i] === PairState.Open, trial });
   }
   // What is held without being listed, a Fixed row holds.
@@ -99,19 +95,5 @@ export function consequenceOf(solved: Solved, trial: Trial): Consequence {
     return load < minimum && load < plan.loadByPerson[p] ? [`${name} (${load} of ${minimum})`] : [];
   });
   const current = plan.seats.map(({ duty, person }) => ({ duty, person }));
-  return { moves: steps({ ...kase, current }, open, after).flat(), passes: passed(solved, after), below };
-}
-
-/** What is wrong with the new plan and was not with the old one. */
-function passed({ case: kase, outcome: { plan, open } }: Solved, after: Plan): string[] {
-  const wrongs = ({ seats }: Plan): string[] =>
-    check(kase, open, seats).flatMap((wrong) => (wrong.kind === 'Uncovered' || wrong.kind === 'Below minimum' ? [] : [passedWords(kase, wrong)]));
-  const before = new Set(wrongs(plan));
-  return wrongs(after).filter((words) => !before.has(words));
-}
-
-function passedWords({ duties, people }: Case, { kind, duty, person, found, allowed, label }: Wrong): string {
-  if (kind === 'Too many') return `${found} people for "${duties[duty!].name}", which needs ${allowed}`;
-  const who = people[person!].name;
-  return label === '' ? `${who} holds ${found} of at most ${allowed}` : `${who} holds ${found} in "${label}", at most ${allowed}`;
+  return { moves: steps({ ...kase, current }, open, after).flat(), below };
 }

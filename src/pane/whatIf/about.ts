@@ -27,13 +27,8 @@ function absenceWords(solved: Solved, person: number): string[] {
   const absence = solved.absence(person);
   if (absence === null) return ['What would be lost without them has to be searched: ask for it with DUTY.ABSENCES.'];
   if (absence.holds.length === 0) return [];
-  const { duties, people } = solved.case;
-  const { lost, dutiesLost, takenOver } = absence;
-  const names = (list: readonly number[]): string => joinNames(list.map((d) => duties[d].name), NAMED);
-  const moved = dutiesLost.length === 0 ? '' : `, but then short: ${names(dutiesLost)}`;
-  const cost = lost === 0 ? `no seat is lost${moved}` : `${counted(lost, 'seat is', 'seats are')} lost: ${names(dutiesLost)}`;
-  const takers = takenOver.flatMap(({ duty, by }) => {
-    return by.length === 0 ? [] : [`${duties[duty].name} (${joinNames(by.map((p) => people[p].name), 2)})`];
-  });
-  return [`If they were away, ${cost}.`, ...(takers.length === 0 ? [] : [`Others would take: ${joinNames(takers, NAMED)}.`])];
+  const { lost, dutiesLost } = absence;
+  const names = joinNames(dutiesLost.map((d) => solved.case.duties[d].name), NAMED);
+  if (lost > 0) return [`If they were away, ${counted(lost, 'seat is', 'seats are')} lost: ${names}.`];
+  return [`If they were away, no seat is lost${names === '' ? '' : `, but others are short then: ${names}`}.`];
 }

@@ -162,12 +162,11 @@ function keyOf({ duty, person }: Option): string {
   return `${duty} ${person}`;
 }
 
-/** The moves that an option leads to, one by one, and what they pass or miss. */
+/** The moves that an option leads to, one by one, and who comes below the minimum. */
 function followsView(solved: Solved, { trial }: Option): TemplateResult {
   if (trial === null) return html`<p class="dp-soft">What follows would have to be searched. Fix it and look at the new plan.</p>`;
-  const { moves, passes, below } = consequenceOf(solved, trial);
+  const { moves, below } = consequenceOf(solved, trial);
   return html`
-    ${passes.length === 0 ? nothing : html`<p dir="auto">Passes a limit: ${passes.join('; ')}.</p>`}
     ${below.length === 0 ? nothing : html`<p dir="auto">Below the minimum then: ${below.join('; ')}.</p>`}
     <ol class="dp-moves">${moves.map((move) => html`<li dir="auto">${moveWords(solved.case, move)}</li>`)}</ol>
   `;
