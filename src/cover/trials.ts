@@ -114,42 +114,41 @@ export class Trials {
     });
   }
 
+  /** A way is missing only where Fixed seats leave nothing of the maximum or of the need, or where none avoids the terminal. */
   #trial(pair: number, half: number, exit: Way | null, entry: Way | null, direct: Way | null): Trial {
     const { plan, reduction } = this.#solution;
     const { arcs, personArc, dutyArc, classes } = reduction;
     const [duty, person] = [this.#kase.pairs.duty[pair], this.#kase.pairs.person[pair]];
     const passesNeed = arcs.capacity[dutyArc[duty]] === 0;
     const passesMaximum = arcs.capacity[personArc[person]] === 0;
-    const way = passesNeed || passesMaximum ? null : direct;
-    const [to, from] = isBest(way, exit, entry) ? [way!, STAY] : [passesMaximum ? STAY : exit!, passesNeed ? STAY : entry!];
     // A seat outside of the network counts towards the minimum all the same.
-    const outside = passesMaximum && plan.heldByPerson[person] < this.#kase.people[person].minimum ? 1 : 0;
-    const priority = (c: number): number | null => (to.class === from.class ? null : (classes[c]?.priority ?? null));
+    const outside = { ...STAY, missed: plan.heldByPerson[person] < this.#kase.people[person].minimum ? -1 : 0 };
+    const through = [passesMaximum ? outside : exit!, passesNeed ? STAY : entry!];
+    const [to, from] = passesNeed || passesMaximum || direct === null ? through : cheaper(direct, through);
+    const priority = (c: number): number | null => (to.class === from.class || c === -1 ? null : classes[c].priority);
     const halves = [half, ...to.halves, ...from.halves];
     return {
       pair,
-      ...this.#dutyChanges(halves),
+      loses: this.#dutiesAt(halves.map((one) => reduction.network.mate[one])),
+      gains: this.#dutiesAt(halves),
       worse: priority(to.class),
       better: priority(from.class),
-      missed: to.missed + from.missed - outside,
+      missed: to.missed + from.missed,
       passesNeed,
       passesMaximum,
       halves,
     };
   }
 
-  /** Which duties the half arcs take a seat from, and which they give one: arcs of duties but those of pairs. */
-  #dutyChanges(halves: readonly number[]): { loses: number[]; gains: number[] } {
-    const { endpoint, mate } = this.#solution.reduction.network;
-    const dutiesAt = (end: (half: number) => number): number[] =>
-      halves.flatMap((half) => (this.#heavy[half] === 1 ? [] : (this.#dutyOfNode.get(end(half)) ?? [])));
-    return { loses: dutiesAt((half) => endpoint[mate[half]]), gains: dutiesAt((half) => endpoint[half]) };
+  /** The duties that half arcs lead to, those of pairs left out: these carry seats to people. */
+  #dutiesAt(halves: readonly number[]): number[] {
+    const { endpoint } = this.#solution.reduction.network;
+    return halves.flatMap((half) => (this.#heavy[half] === 1 ? [] : (this.#dutyOfNode.get(endpoint[half]) ?? [])));
   }
 }
 
-/** True where the way that avoids the terminal is no dearer than the two that meet there, which never gain: the plan at hand is best. */
-function isBest(direct: Way | null, exit: Way | null, entry: Way | null): boolean {
-  if (direct === null || exit === null || entry === null) return direct !== null;
-  const missed = exit.missed + entry.missed;
-  return exit.class !== entry.class || missed > 0 || (missed === 0 && direct.weight <= exit.weight + entry.weight);
+/** The way that avoids the terminal, or two that meet there if they change less. These never gain: the plan at hand is best. */
+function cheaper(direct: Way, [exit, entry]: readonly Way[]): readonly Way[] {
+  const isDearer = exit.class !== entry.class || exit.missed + entry.missed > 0;
+  return isDearer || direct.weight <= exit.weight + entry.weight ? [direct, STAY] : [exit, entry];
 }

@@ -1,14 +1,11 @@
 import { LAST_PRIORITY, type Case } from '../cover/case';
 import type { Move } from '../cover/steps';
 import type { Trial } from '../cover/trials';
+import { names } from '../functions/reasons';
 import type { Solved } from '../functions/solved';
-import { joinNames } from '../sheet/write';
 
 /** Said of what costs nothing at all. */
 export const FREE = 'costs no seat';
-
-/** Duties named before the rest is only counted. */
-const NAMED = 3;
 
 /** What holding a pair would cost, in a few words. */
 export function trialWords({ case: kase, outcome: { plan } }: Solved, trial: Trial): string {
@@ -21,22 +18,12 @@ export function trialWords({ case: kase, outcome: { plan } }: Solved, trial: Tri
 }
 
 function coverWords({ duties }: Case, { loses, gains, worse, better }: Trial): string {
-  const names = (list: readonly number[], priority?: number): string =>
-    joinNames(list.filter((d) => priority === undefined || duties[d].priority === priority).map((d) => duties[d].name), NAMED);
-  if (worse !== null && better !== null) {
-    return `costs 1 seat ${ofPriority(worse)} (${names(loses, worse)}) for 1 ${ofPriority(better)} (${names(gains, better)})`;
-  }
-  if (worse !== null) {
-    const isOnly = duties.every(({ priority }) => priority === worse);
-    const others = names(gains, worse);
-    return `costs 1 seat${isOnly ? '' : `, ${ofPriority(worse)}`}: ${names(loses, worse)}${others === '' ? '' : `, while ${others} gains one`}`;
-  }
-  if (better !== null) return `covers 1 seat more: ${names(gains, better)}`;
-  return loses.length === 0 ? FREE : `${FREE}, but leaves ${names(loses)} short instead of ${names(gains)}`;
-}
-
-function ofPriority(priority: number): string {
-  return priority === LAST_PRIORITY ? 'without priority' : `of priority ${priority}`;
+  const isOne = duties.every(({ priority }) => priority === duties[0].priority);
+  const named = isOne ? duties : duties.map(({ name, priority }) => ({ name: `${name} (${priority === LAST_PRIORITY ? 'no priority' : `priority ${priority}`})` }));
+  const [less, more] = [loses, gains].map((list) => names(named, list));
+  if (less === '') return more === '' ? FREE : `covers 1 seat more: ${more}`;
+  const cost = worse === null ? FREE : better === null ? 'costs 1 seat' : 'costs a more urgent seat';
+  return `${cost}: ${less}${more === '' ? '' : ` short instead of ${more}`}`;
 }
 
 /** More than any priority, which is at most a million and one. */
@@ -46,7 +33,7 @@ const PRIORITIES = 2 ** 21;
 const LIMIT = 8 * PRIORITIES;
 
 /**
- * How dear a trial is, for putting options in order: nothing at all, then other duties short, minimums
+ * How dear a trial is, for putting options in order: 0 for nothing at all, then other duties short, minimums
  * missed, seats lost (the least urgent first, and first for another seat), and last what passes a limit.
  */
 export function trialCost({ loses, worse, better, missed, passesNeed, passesMaximum }: Trial): number {

@@ -57,13 +57,13 @@ function optionsWhere(solved: Solved, test: (seat: Seat) => boolean, trials: rea
   for (const { duty, person } of plan.seats.filter((seat) => test(seat) && held.has(number(seat)))) {
     options.push({ duty, person, isHeld: true, words: plainWords(PairState.Fixed, true, null), isOpen: false, trial: null });
   }
-  return options.map((option) => ({ option, cost: costOf(option) })).sort((a, b) => a.cost - b.cost).map(({ option }) => option);
+  return options.sort((a, b) => costOf(a) - costOf(b));
 }
 
 /** Where an option stands in the list: what is held first, then what costs least. */
 function costOf({ isHeld, isOpen, words, trial }: Option): number {
   if (isHeld) return -1;
-  if (!isOpen) return Infinity;
+  if (!isOpen) return Number.MAX_VALUE;
   if (trial === null) return words === FREE ? 0 : 1;
   return trialCost(trial);
 }
