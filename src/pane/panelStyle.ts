@@ -17,10 +17,10 @@ export const PANEL_STYLE = `
 .dp-knot { display: grid; grid-template-columns: minmax(0, 1fr) 40px minmax(0, 1fr); margin: 6px 0; }
 .dp-side { display: flex; flex-direction: column; justify-content: space-around; }
 .dp-box {
-  height: 56px; padding: 2px 5px; overflow: hidden; border: 1px solid var(--dp-good); border-radius: 4px;
+  height: var(--dp-box); padding: 2px 5px; overflow: hidden; border: 1px solid var(--dp-good); border-radius: 4px;
   background: var(--dp-good-ground); font-size: 12.5px; line-height: 16px;
 }
-.dp-box .dp-clip { -webkit-line-clamp: 2; }
+.dp-box .dp-clip { -webkit-line-clamp: 3; }
 .dp-box .dp-soft { font-size: 12.5px; }
 .dp-box-short { border-color: var(--dp-short); background: var(--dp-short-ground); }
 .dp-knot line { stroke: var(--dp-soft); }
@@ -42,6 +42,6 @@ export const PANEL_STYLE = `
   .dp-fill, .dp-seat { background: CanvasText; border-color: CanvasText; forced-color-adjust: none; }
   .dp-striped { background: repeating-linear-gradient(45deg, CanvasText 0 2px, Canvas 2px 4px); }
   .dp-empty { background: Canvas; }
-  .dp-knot line { stroke: CanvasText; }
+  .dp-knot line, .dp-knot .dp-held { stroke: CanvasText; }
 }
 `;

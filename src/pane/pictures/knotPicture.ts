@@ -1,3 +1,4 @@
+import { coverBounds } from '../../cover/bound';
 import { PairState } from '../../cover/openPairs';
 import type { Knot } from '../../cover/shortage';
 import { trialCost } from '../../desk/trialWords';
@@ -19,6 +20,8 @@ export interface KnotPicture {
   readonly people: Side;
   /** Which boxes hold a pair of these duties and people. */
   readonly lines: readonly Line[];
+  /** For each person what keeps them from holding more of it, in words; empty where a search would have to tell. */
+  readonly stops: ReadonlyMap<number, ReadonlySet<string>>;
   /** Seats that these people hold elsewhere; the first ones. */
   readonly elsewhere: readonly Elsewhere[];
   readonly moreElsewhere: number;
@@ -75,7 +78,20 @@ function knotPicture(solved: Solved, knot: Knot): KnotPicture {
   );
   const elsewhere = plan.seats.filter(({ duty, person }) => tasks.has(person) && !isInside.has(duty));
   const looked = elsewhere.slice(0, LOOKED_AT).map(({ duty, person }) => ({ duty, person, others: othersFor(solved, duty) }));
-  return { knot, duties, people, lines, elsewhere: looked, moreElsewhere: elsewhere.length - looked.length };
+  const moreElsewhere = elsewhere.length - looked.length;
+  return { knot, duties, people, lines, stops: stopsOf(solved, isInside), elsewhere: looked, moreElsewhere };
+}
+
+/** The bounds that the proof counts the pairs of these duties under. */
+function stopsOf(solved: Solved, isInside: ReadonlySet<number>): Map<number, Set<string>> {
+  const stops = new Map<number, Set<string>>();
+  const { charges } = solved.isFlow ? coverBounds(solved.case, solved.solution) : { charges: [] };
+  for (const { duty, person, bound } of charges) {
+    if (!isInside.has(duty) || (bound?.kind !== 'maximum' && bound?.kind !== 'limit')) continue;
+    const words = bound.kind === 'maximum' ? `${bound.allowed} in all` : `${bound.allowed} in ${bound.label}`;
+    stops.set(person, (stops.get(person) ?? new Set()).add(words));
+  }
+  return stops;
 }
 
 /** Everyone who could take a duty and does not, at no cost. */

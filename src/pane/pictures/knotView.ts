@@ -1,10 +1,12 @@
 import { html, nothing, svg, type TemplateResult } from 'lit-html';
 import type { Solved } from '../../functions/solved';
 import { knotReason, names } from '../../functions/reasons';
+import { joinNames } from '../../sheet/write';
 import type { Elsewhere, KnotPicture, Side } from './knotPicture';
 
-/** Height of a box with its share of the gaps, in pixels; the lines between boxes count on it. */
-const ROW = 62;
+/** Height of a box, in pixels, and with its share of the gaps; the lines between boxes count on it. Groups have a line more. */
+const BOX = { single: 56, group: 72 };
+const BETWEEN = 6;
 
 /** Width of the room for lines, likewise. */
 const GAP = 40;
@@ -12,28 +14,32 @@ const GAP = 40;
 /** Places drawn one by one. */
 const PLACES = 8;
 
+/** Limits named before the rest is only counted. */
+const STOPS = 4;
+
 /** Letters of a name that fit into a box; of these, so many from its end. */
-const LETTERS = 26;
+const LETTERS = 24;
 const END = 8;
 
 /** A bottleneck: duties on one side, people with their places on the other, lines between who may take what. */
 export function knotView(solved: Solved, picture: KnotPicture): TemplateResult {
   const { knot, duties, people, lines, elsewhere, moreElsewhere } = picture;
-  const height = ROW * Math.max(rowsOf(duties), rowsOf(people));
-  const at = (side: Side, box: number): number => (height * (box + 0.5)) / rowsOf(side);
+  const box = [...duties.boxes, ...people.boxes].some(({ length }) => length > 1) ? BOX.group : BOX.single;
+  const height = (box + BETWEEN) * Math.max(rowsOf(duties), rowsOf(people));
+  const at = (side: Side, place: number): number => (height * (place + 0.5)) / rowsOf(side);
   return html`
     <figure class="dp-figure">
       <figcaption>Bottleneck ${knot.number}: ${knot.needed} needed, room for ${knot.places}</figcaption>
-      <div class="dp-knot">
-        ${sideView(duties, (box) => dutyBox(solved, box))}
+      <div class="dp-knot" style="--dp-box:${box}px">
+        ${sideView(duties, (members) => dutyBox(solved, members))}
         <svg width=${GAP} height=${height} aria-hidden="true">
           ${lines.map(({ duty, person, isHeld }) => {
             return svg`<line class=${isHeld ? 'dp-held' : ''} x1="0" y1=${at(duties, duty)} x2=${GAP} y2=${at(people, person)} />`;
           })}
         </svg>
-        ${sideView(people, (box) => personBox(solved, picture, box))}
+        ${sideView(people, (members) => personBox(solved, picture, members))}
       </div>
-      ${listView('The same in words', [knotReason(solved.case, knot), ...people.boxes.map((box, p) => personWords(solved, picture, box, p))])}
+      ${listView('The same in words', [knotReason(solved.case, knot), ...people.boxes.map((members, p) => personWords(solved, picture, members, p))])}
       ${elsewhere.length === 0
         ? nothing
         : listView(`What they hold elsewhere (${elsewhere.length + moreElsewhere})`, elsewhere.map((seat) => elsewhereWords(solved, seat)))}
@@ -75,8 +81,8 @@ function personBox(solved: Solved, picture: KnotPicture, box: readonly number[])
 function boxView(style: string, all: readonly { readonly name: string }[], box: readonly number[], below: unknown): TemplateResult {
   return html`
     <li class=${style} title=${names(all, box)}>
-      <span class="dp-clip" dir="auto">${shortened(all[box[0]].name)}</span>
-      <span class="dp-soft">${box.length > 1 ? `and ${box.length - 1}: ` : ''}${below}</span>
+      <span class="dp-clip" dir="auto">${shortened(all[box[0]].name)}${box.length > 1 ? ` and ${box.length - 1} more` : ''}</span>
+      <span class="dp-soft">${below}</span>
     </li>
   `;
 }
@@ -99,10 +105,12 @@ function personWords(solved: Solved, picture: KnotPicture, box: readonly number[
   const [here, elsewhere, left] = placesOf(solved, picture, box);
   const tasks = picture.lines.filter(({ person }) => person === at).flatMap(({ duty }) => picture.duties.boxes[duty]);
   const { people, duties } = solved.case;
-  return `${names(people, box)}: ${here} here, ${elsewhere} elsewhere, ${left} left; may take ${names(duties, tasks)}.`;
+  const stops = new Set(box.flatMap((person) => [...(picture.stops.get(person) ?? [])]));
+  const most = stops.size === 0 ? '' : `; at most ${joinNames([...stops], STOPS)}`;
+  return `${names(people, box)}: ${here} here, ${elsewhere} elsewhere, ${left} left${most}; may take ${names(duties, tasks)}.`;
 }
 
 function elsewhereWords({ case: { duties, people } }: Solved, { duty, person, others }: Elsewhere): string {
   const held = `${people[person].name}: ${duties[duty].name}`;
-  return others === null ? held : `${held}; at no cost also: ${others.length === 0 ? 'nobody' : names(people, others)}`;
+  return others === null ? held : `${held}; others at no cost: ${others.length === 0 ? 'nobody' : names(people, others)}`;
 }

@@ -2,6 +2,7 @@ import { html, nothing, type TemplateResult } from 'lit-html';
 import type { Journal } from '../../functions/journal';
 import type { WorkbookPort } from '../../host/port';
 import { CasePanel } from '../casePanel';
+import type { LiveCase } from '../panel';
 import { knotPictures } from './knotPicture';
 import { knotView } from './knotView';
 import { loadPicture } from './loadPicture';
@@ -28,10 +29,19 @@ export class PicturesPanel extends CasePanel {
     return html`
       <details @toggle=${toggle}>
         <summary>Pictures</summary>
-        ${this.#isOpened
-          ? html`${this.choiceView()} ${knotPictures(live.solved).map((picture) => knotView(live.solved, picture))} ${loadView(loadPicture(live.solved))}`
-          : nothing}
+        ${this.#isOpened ? this.#picturesView(live) : nothing}
       </details>
+    `;
+  }
+
+  #picturesView({ solved }: LiveCase): TemplateResult {
+    const knots = knotPictures(solved).map((picture) => knotView(solved, picture));
+    return html`
+      ${this.choiceView()}
+      ${knots.length === 0 ? nothing : html`
+        <p class="dp-soft">A thick line: held; a thin one: could be. Squares are places: full ones held here, striped ones elsewhere, broken ones left.</p>
+      `}
+      ${knots} ${loadView(loadPicture(solved))}
     `;
   }
 }
