@@ -56,11 +56,26 @@ function coverSheet(solved: Solved, day: string, { verdict }: CheckSheet): Sheet
     [null],
     ['Signed by', null],
     [null],
-    [CAUTION],
-    ['The plan was made from the tables as they stood on the date above. It is plain text and numbers; only the check is calculated.'],
+    ...inLines(CAUTION),
+    [null],
+    ...inLines('The plan was made from the tables as they stood on the date above. It is plain text and numbers; only the check is calculated.'),
   ];
   return { name: 'Handed over', rows, titleRows: [0], widths: [26, 60], alarms: ['B9'] };
 }
+
+/** A text in rows that fit on a printed page. */
+function inLines(text: string): DraftCell[][] {
+  const lines = [''];
+  for (const word of text.split(' ')) {
+    const longer = `${lines.at(-1)} ${word}`.trim();
+    if (longer.length <= LINE) lines[lines.length - 1] = longer;
+    else lines.push(word);
+  }
+  return lines.map((line) => [line]);
+}
+
+/** Letters to a line: the widths of both columns of the cover sheet, less what wide letters take. */
+const LINE = 80;
 
 /** A row a seat: duty, person, slot, group, load, and the note. */
 function planRows(solved: Solved): DraftCell[][] {
