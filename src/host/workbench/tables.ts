@@ -6,6 +6,7 @@ import type { Engine, EngineModel, EngineZone } from './engine';
 import { literal } from './literal';
 import { alarmStep } from './alarms';
 import { runBulk } from './bulk';
+import { wholesStep } from './checks';
 
 const HEADING = { bold: true, fillColor: '#e3efe9' };
 const TITLE = { bold: true, fontSize: 14, textColor: '#1f5a4c' };
@@ -143,15 +144,7 @@ export class EngineTables {
       const size = width * CHARACTER + MARGIN;
       this.#model.dispatch('RESIZE_COLUMNS_ROWS', { sheetId, sheetName, dimension: 'COL', elements: [column], size });
     });
-    for (const { column, from, least } of wholes) {
-      const zone = { top: from, bottom: rows.length + SPARE_ROWS - 1, left: column, right: column };
-      const criterion = { type: 'isGreaterOrEqualTo', values: [String(least)] };
-      this.#model.dispatch('ADD_DATA_VALIDATION_RULE', {
-        sheetId,
-        ranges: [this.#model.getters.getRangeDataFromZone(sheetId, zone)],
-        rule: { id: crypto.randomUUID(), criterion, isBlocking: false },
-      });
-    }
+    runBulk(this.#model, wholes.map((whole) => wholesStep(this.#model.getters, sheetId, whole, rows.length + SPARE_ROWS - 1)));
   }
 
   #regions(sheetId: string): Zone[] {
