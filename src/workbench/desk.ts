@@ -1,7 +1,6 @@
 import { columnLetters, formatAddress } from '../host/address';
 import type { Engine, EngineModel } from '../host/workbench/engine';
 import type { WorkbenchWorkbook } from '../host/workbench/workbook';
-import { answerSheets, type Answered } from './answerSheets';
 import type { Book } from './files/book';
 import { formatTable } from './files/formats';
 import { fromEngine } from './files/fromEngine';
@@ -146,23 +145,10 @@ export class Desk {
     this.#isChanged = false;
     model.on('command-dispatched', this, (command) => {
       if (engine.isCoreCommand(command)) this.#isChanged = true;
-      // Sheets were made by hand or by the pane: what was offered about those opened is past.
-      if (command.type === 'CREATE_SHEET') this.#parts.notice.hide();
     });
-    this.#remark([...sentences, ...unknownFormulas(book, model)], answerSheets(book));
-  }
-
-  /** Says what is to be said of a workbook just opened, and offers to answer its tables. */
-  #remark(sentences: readonly string[], answered: Answered | null): void {
-    const { notice } = this.#parts;
-    notice.hide();
-    if (answered !== null) {
-      notice.show([...sentences, 'These look like tables of who may take what. They can be answered on new sheets; nothing in them is changed.'], [
-        { label: 'Answer these tables', run: () => this.#show(this.#name, answered.book, answered.remarks) },
-      ]);
-    } else if (sentences.length > 0) {
-      notice.show(sentences);
-    }
+    const remarks = [...sentences, ...unknownFormulas(book, model)];
+    if (remarks.length > 0) this.#parts.notice.show(remarks);
+    else this.#parts.notice.hide();
   }
 }
 

@@ -85,9 +85,9 @@ describe('opening', () => {
       'pairs.csv': '\uFEFFDuty;Person\r\nChoir;Ann\r\n"Organ; large";Bob\r\nOrgan, small;Ann\r\n',
       'people.csv': 'Person,Maximum\nAnn,1\nBob,1\n',
     });
-    await desk.page.getByText('Answer these tables').click();
+    await desk.pane.getByRole('button', { name: 'Put the answers on new sheets' }).click();
     await desk.pane.getByText('of 3 seats covered').waitFor();
-    expect(await desk.sheets()).toEqual(['pairs', 'people', 'Results', 'Grid']);
+    expect(await desk.sheets()).toEqual(['pairs', 'people', 'Results', 'Grid', 'Why', 'Rules']);
     expect(await desk.page.locator('#file-name').textContent()).toBe('tables.xlsx');
     expect(await desk.valueAt('pairs!A3')).toBe('Organ; large');
     expect(await desk.valueAt('Results!B5')).toBe(1);
@@ -98,6 +98,7 @@ describe('opening', () => {
   it('offers no answers for tables it does not know', async () => {
     await desk.give({ 'stock.csv': 'Item,Pieces\nChairs,12\n' });
     await desk.page.getByText('stock.xlsx').waitFor();
+    await desk.pane.getByText('No tables were found yet').waitFor();
     expect(await desk.notice.isVisible()).toBe(false);
     expect(await desk.valueAt('stock!B2')).toBe(12);
   });
@@ -114,7 +115,7 @@ describe('opening', () => {
       },
       { pairs: PAIRS, people: PEOPLE },
     );
-    await desk.page.getByText('Answer these tables').click();
+    await desk.pane.getByRole('button', { name: 'Put the answers on new sheets' }).click();
     await desk.pane.getByText('of 2 seats covered').waitFor();
   });
 
@@ -143,7 +144,7 @@ describe('what files say', () => {
       [`${markup}.csv`]: ['Duty,Person', ...hostile.map((name) => `${cell(name)},${cell(name)}`)].join('\n'),
       'people.csv': 'Person,Maximum\nNobody,1\n',
     });
-    await desk.page.getByText('Answer these tables').click();
+    await desk.pane.getByRole('button', { name: 'Put the answers on new sheets' }).click();
     await desk.pane.getByText('of 7 seats covered').waitFor();
     await desk.pane.getByText('Findings (').click();
     const [sheet] = await desk.sheets();

@@ -1,7 +1,6 @@
 import { formatZone, parseZone } from '../address';
 import { ALARM } from '../port';
-import type { BulkStep } from './bulk';
-import type { EngineGetters } from './engine';
+import type { EngineModel } from './engine';
 
 /** A conditional format as the engine keeps it. */
 export interface EngineCondition {
@@ -20,10 +19,10 @@ const RULE = {
   style: { fillColor: '#fbe9df', textColor: '#9c3b12', bold: true },
 };
 
-/** The step that makes a cell an alarm. */
-export function alarmStep(getters: EngineGetters, sheetId: string, cell: string): BulkStep {
-  const range = getters.getRangeDataFromZone(sheetId, parseZone(cell)!);
-  return { command: 'ADD_CONDITIONAL_FORMAT', payload: { sheetId, ranges: [range], cf: { id: crypto.randomUUID(), rule: RULE } } };
+/** Makes a cell, or a rectangle of them, an alarm. */
+export function addAlarm(model: EngineModel, sheetId: string, cells: string): void {
+  const range = model.getters.getRangeDataFromZone(sheetId, parseZone(cells)!);
+  model.dispatch('ADD_CONDITIONAL_FORMAT', { sheetId, ranges: [range], cf: { id: crypto.randomUUID(), rule: RULE } });
 }
 
 /** The same for a sheet that is loaded. */

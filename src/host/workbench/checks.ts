@@ -1,6 +1,5 @@
 import type { SheetDraft } from '../port';
-import type { BulkStep } from './bulk';
-import type { EngineGetters } from './engine';
+import type { EngineModel } from './engine';
 
 /** What may be typed into ranges, as the engine keeps it. */
 export interface EngineCheck {
@@ -19,14 +18,14 @@ export interface EngineCheck {
   readonly file?: object;
 }
 
-/** Whole numbers from `least` on, for rows to be typed; anything else is marked, not refused. */
-export function wholesStep(
-  getters: EngineGetters,
+/** Lets only whole numbers from `least` on be typed into a column; anything else is marked, not refused. */
+export function addWholes(
+  model: EngineModel,
   sheetId: string,
   { column, from, least }: NonNullable<SheetDraft['wholes']>[number],
   lastRow: number,
-): BulkStep {
-  const range = getters.getRangeDataFromZone(sheetId, { top: from, bottom: lastRow, left: column, right: column });
+): void {
+  const range = model.getters.getRangeDataFromZone(sheetId, { top: from, bottom: lastRow, left: column, right: column });
   const rule: Omit<EngineCheck, 'ranges'> = {
     id: crypto.randomUUID(),
     isBlocking: false,
@@ -41,5 +40,5 @@ export function wholesStep(
       errorMessage: `A whole number of at least ${least} is expected here.`,
     },
   };
-  return { command: 'ADD_DATA_VALIDATION_RULE', payload: { sheetId, ranges: [range], rule } };
+  model.dispatch('ADD_DATA_VALIDATION_RULE', { sheetId, ranges: [range], rule });
 }

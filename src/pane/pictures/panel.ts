@@ -1,7 +1,7 @@
 import { html, nothing, svg, type TemplateResult } from 'lit-html';
 import type { Journal } from '../../functions/journal';
 import type { WorkbookPort } from '../../host/port';
-import { counted } from '../model';
+import { counted } from '../words';
 import { liveCases, Panel } from '../panel';
 import { knotPictures, loadPicture, type KnotPicture, type LoadBar, type LoadPicture } from './model';
 

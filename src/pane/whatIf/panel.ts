@@ -5,7 +5,7 @@ import type { Journal } from '../../functions/journal';
 import type { Solved } from '../../functions/solved';
 import type { WorkbookPort } from '../../host/port';
 import { nameKey } from '../../sheet/name';
-import { counted } from '../model';
+import { counted } from '../words';
 import { liveCases, Panel, type LiveCase } from '../panel';
 
 /** Options shown before the rest is asked for. */
@@ -43,7 +43,7 @@ export class WhatIfPanel extends Panel {
       </label>
       <datalist id="dp-names">${[...duties, ...people].map(({ name }) => html`<option value=${name}></option>`)}</datalist>
       ${this.#answerView(first)}
-      ${this.#decisions.length === 0 ? nothing : this.#decisionsView()}
+      ${this.#decisions.length === 0 ? nothing : this.#decisionsView(first)}
     `;
   }
 
@@ -131,7 +131,7 @@ export class WhatIfPanel extends Panel {
     return html`<p>${cost}</p><ol class="dp-moves">${moves.map((move) => html`<li dir="auto">${move}</li>`)}</ol>`;
   }
 
-  #decisionsView(): TemplateResult {
+  #decisionsView({ address }: LiveCase): TemplateResult {
     return html`
       <details>
         <summary>Decisions in the rules (${this.#decisions.length})</summary>
@@ -140,7 +140,7 @@ export class WhatIfPanel extends Panel {
             (decision) => html`
               <li class="dp-item">
                 <span class="dp-clip" dir="auto">${decision.word}: ${decision.person}, ${decision.duty}</span>
-                ${this.button('Take away', () => undecide(this.port, decision))}
+                ${this.button('Take away', () => undecide(this.port, address, decision))}
               </li>
             `,
           )}
