@@ -178,6 +178,17 @@ describe('what files say', () => {
     await desk.select(`'${sheet.replaceAll("'", "''")}'!A2`);
     await desk.page.locator('.o-sheet.active').click({ button: 'right' });
     await desk.page.keyboard.press('Escape');
+    await desk.pane.getByRole('button', { name: 'Make the sheets to hand over' }).click();
+    await desk.pane.getByText('Made 5 sheets').waitFor();
+    expect(await desk.valueAt('Handed over!B9')).toMatch(/^All is well/u);
+    const handed = await openXlsx((await desk.save()).bytes);
+    const plan = handed.sheets.find(({ name }) => name === 'Plan by duty')!.cells.filter(({ row, column }) => row > 0 && column === 0);
+    expect(plan.map(({ value }) => value).sort()).toEqual([...hostile].sort());
+    expect(plan.filter(({ formula }) => formula !== null)).toEqual([]);
+    const field = desk.pane.getByLabel('A duty or a person');
+    await field.fill(hostile[0]);
+    await field.press('Enter');
+    await desk.pane.getByText('Needs 1, held by 0').waitFor();
     expect(await desk.page.evaluate(() => 'hacked' in window)).toBe(false);
     expect(await desk.page.locator('img[src="x"]').count()).toBe(0);
     const width = await desk.pane.evaluate((element) => element.scrollWidth - element.clientWidth);
