@@ -2,7 +2,7 @@ import type { DataValidation } from 'hucre';
 import type { EngineCheck } from '../../host/workbench/checks';
 import type { Engine } from '../../host/workbench/engine';
 import type { BookCheck, BookName } from './book';
-import { isReadable, KEPT_ONLY, OPERATORS } from './rules';
+import { isReadable, KEPT_ONLY, OPERATORS, toEngineRange, toFileRange } from './rules';
 import { toStored } from './spelling';
 import { given } from './styles';
 
@@ -28,7 +28,7 @@ type Criterion = EngineCheck['criterion'];
 export function toEngineChecks(checks: readonly BookCheck[], names: readonly BookName[], engine: Engine): EngineCheck[] {
   return checks.map(({ ranges, rule }, i) => ({
     id: `check${i + 1}`,
-    ranges,
+    ranges: ranges.map(toEngineRange),
     isBlocking: rule.showErrorMessage === true && (rule.errorStyle ?? 'stop') === 'stop',
     criterion: criterionOf(rule, ranges, names, engine) ?? KEPT_ONLY,
     file: rule,
@@ -37,8 +37,9 @@ export function toEngineChecks(checks: readonly BookCheck[], names: readonly Boo
 
 /** The same from the engine. */
 export function fromEngineChecks(checks: readonly EngineCheck[] = []): BookCheck[] {
-  return checks.flatMap(({ ranges, criterion, file }) => {
+  return checks.flatMap(({ ranges: own, criterion, file }) => {
     if (file === undefined) return [];
+    const ranges = own.map(toFileRange);
     const rule = file as BookCheck['rule'];
     if (!WITH_FORMULAS.has(rule.type)) return [{ ranges, rule }];
     const [formula1, formula2] = criterion.values.map((value) => (value.startsWith('=') ? value.slice(1) : undefined));

@@ -2,7 +2,7 @@ import type { CellStyle, ConditionalRule } from 'hucre';
 import { isEngineAlarm, type EngineCondition } from '../../host/workbench/alarms';
 import type { Engine, EngineStyle } from '../../host/workbench/engine';
 import type { BookCondition } from './book';
-import { isReadable, OPERATORS } from './rules';
+import { isReadable, OPERATORS, toEngineRange, toFileRange } from './rules';
 import { toStored } from './spelling';
 import { given, readStyle } from './styles';
 
@@ -25,7 +25,7 @@ const KEPT_ONLY = { type: 'CellIsRule', operator: 'customFormula', values: ['FAL
 export function toEngineConditions(conditions: readonly BookCondition[], engine: Engine): EngineCondition[] {
   return conditions.map(({ ranges, rule }, i) => ({
     id: `condition${i + 1}`,
-    ranges,
+    ranges: ranges.map(toEngineRange),
     rule: drawn(rule, ranges, engine) ?? KEPT_ONLY,
     ...given({ stopIfTrue: rule.stopIfTrue }),
     file: rule,
@@ -35,8 +35,9 @@ export function toEngineConditions(conditions: readonly BookCondition[], engine:
 /** The same from the engine, but for the alarms. */
 export function fromEngineConditions(conditions: readonly EngineCondition[] = []): BookCondition[] {
   return conditions.flatMap((condition) => {
-    const { ranges, rule, file } = condition;
+    const { ranges: own, rule, file } = condition;
     if (file === undefined || isEngineAlarm(condition)) return [];
+    const ranges = own.map(toFileRange);
     const stored = file as BookCondition['rule'];
     const values = 'values' in rule && Array.isArray(rule.values) ? (rule.values as string[]) : [];
     const formulas = stored.formulas.map((formula, i) => (values[i]?.startsWith('=') ? values[i].slice(1) : formula));

@@ -40,6 +40,8 @@ const RULES: readonly (readonly [string, string, (sheet: Sheet) => number])[] = 
   ['some conditional formats', 'cfRule', ({ conditionalRules = [] }) => conditionalRules.filter(isWhole).length],
   ['some input checks (data validation)', 'dataValidation', ({ dataValidations = [] }) => dataValidations.length],
 ];
+/** A column or a row with a style of its own. */
+const WHOLE_LOOK = /<(?:col\s[^>]*\bstyle="[1-9]|row\s[^>]*\bcustomFormat="(?:1|true))/u;
 const SHEET = /^xl\/worksheets\/[^/]+\.xml$/iu;
 
 /** @returns in words, what of a file is not in its book */
@@ -49,7 +51,9 @@ export async function lostParts(bytes: Uint8Array, workbook: Workbook): Promise<
   const features = FEATURES.filter(([, isThere]) => workbook.sheets.some(isThere));
   const texts = await Promise.all(entries.filter(({ name }) => SHEET.test(name)).map(({ text }) => text()));
   const rules = RULES.filter(([, tag, count]) => tagsIn(texts, tag) > sum(workbook.sheets.map(count)));
-  return [...parts.map(([, words]) => words), ...features.map(([words]) => words), ...rules.map(([words]) => words)];
+  const looks = texts.some((text) => WHOLE_LOOK.test(text)) ? ['the look of blank cells that whole columns or rows have'] : [];
+  const locks = workbook.workbookProtection === undefined ? [] : ['protection of the workbook'];
+  return [...parts.map(([, words]) => words), ...[...features, ...rules].map(([words]) => words), ...looks, ...locks];
 }
 
 /** How often an element begins, under whatever prefix: newer kinds of rules are stored apart under their own. */

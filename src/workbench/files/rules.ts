@@ -29,3 +29,24 @@ export function isReadable(formula: string, ranges: readonly string[], { Compile
   const names = formula.replace(QUOTED, '').matchAll(FUNCTION);
   return [...names].every(([, name]) => registries.functionRegistry.contains(name.toUpperCase()));
 }
+
+/** The last row and column of a sheet in a file. */
+const LAST_ROW = 1_048_576;
+const LAST_COLUMN = 'XFD';
+const RANGE = /^([A-Z]*)(\d*):([A-Z]*)(\d*)$/iu;
+
+/** A range that reaches the end of a file's sheet as one without an end: the engine looks at every cell of a range. */
+export function toEngineRange(range: string): string {
+  const [, left, top, right, bottom] = RANGE.exec(range) ?? [];
+  if (left === undefined) return range;
+  const isToTheEnd = Number(bottom) >= LAST_ROW;
+  if (right.toUpperCase() === LAST_COLUMN && !isToTheEnd) return left.toUpperCase() === 'A' ? `${top}:${bottom}` : `${left}${top}:${bottom}`;
+  return isToTheEnd ? `${left}${top}:${right}` : range;
+}
+
+/** The same the other way round. */
+export function toFileRange(range: string): string {
+  const [, left, top, right, bottom] = RANGE.exec(range) ?? [];
+  if (left === undefined) return range;
+  return `${left || 'A'}${top || '1'}:${right || LAST_COLUMN}${bottom || LAST_ROW}`;
+}

@@ -92,6 +92,17 @@ describe('input checks of a file', () => {
     expect(model.exportData().sheets[0].dataValidationRules?.[0].criterion).toEqual({ type: 'isGreaterOrEqualTo', values: ['0'] });
   });
 
+  it('for whole columns and rows cost the engine only the cells there are, and keep their ranges', async () => {
+    const ranges = ['A1:A1048576', 'C2:D1048576', 'A5:XFD6', 'F2:XFD3'];
+    const rules = ranges.map((range) => `<dataValidation type="whole" sqref="${range}" operator="lessThan"><formula1>9</formula1></dataValidation>`);
+    const { sheet, model } = await saved({ after: `<dataValidations>${rules.join('')}</dataValidations>` }, insertRow);
+    const { getters } = model as unknown as { getters: { isDataValidationInvalid(at: object): boolean } };
+    const before = performance.now();
+    expect(getters.isDataValidationInvalid({ sheetId: 'sheet1', col: 0, row: 1 })).toBe(false);
+    expect(performance.now() - before).toBeLessThan(1_000);
+    expect(elements(sheet, 'dataValidation').map((xml) => /sqref="([^"]*)"/u.exec(xml)![1])).toEqual(['A2:A1048576', 'C3:D1048576', 'A6:XFD7', 'F3:XFD4']);
+  });
+
   it('of a sheet that the product adds are in the saved file', async () => {
     const draft = { name: 'Need', rows: [['Duty', 'Need'], ['Choir', 2]], wholes: [{ column: 1, from: 1, least: 0 }] };
     const { bytes } = await saved({}, (model) => new EngineTables(model, engine).addSheets([draft]));
@@ -199,6 +210,8 @@ describe('what a file has beyond that', () => {
     expect((await saved({ sheets, styles: border('<bottom style="medium"/>') })).book.lost).toEqual([]);
     expect((await saved({ after: '<rowBreaks><brk id="3"/></rowBreaks>' })).book.lost).toEqual(['page breaks']);
     expect((await saved({ sheets: { S: `<row r="1" outlineLevel="1">${text('A1', 'a')}</row>` } })).book.lost).toEqual(['grouped rows and columns']);
+    const whole = `<row r="1" s="1" customFormat="1">${text('A1', 'a')}</row>`;
+    expect((await saved({ sheets: { S: whole } })).book.lost).toEqual(['the look of blank cells that whole columns or rows have']);
     const names = '<definedName name="_xlnm.Print_Area" localSheetId="0">S!$A$1:$B$2</definedName>';
     expect((await saved({ names })).book.lost).toEqual(['print areas and repeated headings']);
   });
