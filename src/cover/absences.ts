@@ -22,19 +22,22 @@ export interface Absence {
  * what can be covered is covered again by augmenting paths, never from scratch.
  */
 export function absences(kase: Case, solution: Solution): Absence[] {
-  const { plan, residual } = solution;
-  const work = new Int32Array(residual.length);
   const holds: number[][] = kase.people.map(() => []);
-  for (const { duty, person } of plan.seats) holds[person].push(duty);
-  return kase.people.map((_, person) => {
-    const own = holds[person].sort((a, b) => a - b);
-    if (own.length === 0) return { person, holds: [], lost: 0, dutiesLost: [], takenOver: [] };
-    work.set(residual);
-    return absence(kase, solution, work, person, own);
-  });
+  for (const { duty, person } of solution.plan.seats) holds[person].push(duty);
+  const work = new Int32Array(solution.residual.length);
+  return holds.map((own, person) => absence(kase, solution, work, person, own.sort((a, b) => a - b)));
 }
 
+/** The absence of one person. */
+export function absenceOf(kase: Case, solution: Solution, person: number): Absence {
+  const own = solution.plan.seats.flatMap((seat) => (seat.person === person ? [seat.duty] : []));
+  return absence(kase, solution, new Int32Array(solution.residual.length), person, own.sort((a, b) => a - b));
+}
+
+/** @param work an array of the length of the residual capacities, to be written over */
 function absence(kase: Case, { reduction, plan, residual }: Solution, work: Int32Array, person: number, holds: number[]): Absence {
+  if (holds.length === 0) return { person, holds, lost: 0, dutiesLost: [], takenOver: [] };
+  work.set(residual);
   const fixedHere = takeBack(kase, reduction, work, person);
   cover(reduction, work);
   const before = dutyFlow(reduction, residual);

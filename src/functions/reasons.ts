@@ -39,7 +39,8 @@ function listInWords(list: readonly string[]): string {
   return list.length === 1 ? list[0] : `${list.slice(0, -1).join(`${comma} `)} and ${list.at(-1)!}`;
 }
 
-function names(list: readonly { readonly name: string }[], numbers: readonly number[]): string {
+/** The names of some duties or people; the end of a long list is only counted. */
+export function names(list: readonly { readonly name: string }[], numbers: readonly number[]): string {
   return joinNames(numbers.map((number) => list[number].name), NAMED);
 }
 

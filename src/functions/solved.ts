@@ -1,4 +1,4 @@
-import { absences, type Absence } from '../cover/absences';
+import { absenceOf, absences, type Absence } from '../cover/absences';
 import type { Case } from '../cover/case';
 import { choices, type Use } from '../cover/choices';
 import { fingerprint } from '../cover/fingerprint';
@@ -9,6 +9,7 @@ import { remedies, type Remedies } from '../cover/remedies';
 import type { NotFlow } from '../cover/reduce';
 import { knots, shortages, type Shortage } from '../cover/shortage';
 import { solve, type Solution } from '../cover/solve';
+import { Trials } from '../cover/trials';
 import type { Answers, Found, Task } from '../exact/answers';
 import { readCase } from '../sheet/readCase';
 import type { Range } from '../sheet/range';
@@ -39,6 +40,7 @@ export class Solved {
   #outcome: Outcome | null = null;
   #shortages: readonly Shortage[] | null = null;
   #absences: readonly Absence[] | null = null;
+  #trials: Trials | null = null;
   #remedies: Remedies | NotFlow | 'too many' | null = null;
   #fingerprint: string | null = null;
 
@@ -108,6 +110,15 @@ export class Solved {
   }
 
   /**
+   * What follows where a person is made to hold an open pair.
+   * @throws like `solution`
+   */
+  get trials(): Trials {
+    this.#trials ??= new Trials(this.case, this.solution);
+    return this.#trials;
+  }
+
+  /**
    * What the absence of each person would cost, by person; null: not worked out in time.
    * @throws like `outcome`
    */
@@ -116,6 +127,15 @@ export class Solved {
     if ('crossing' in flow) return this.#ask('absences');
     this.#absences ??= absences(this.case, flow);
     return this.#absences;
+  }
+
+  /**
+   * The same for one person; null: it would have to be searched.
+   * @throws like `outcome`
+   */
+  absence(person: number): Absence | null {
+    if (this.isFlow) return this.#absences?.[person] ?? absenceOf(this.case, this.solution, person);
+    return this.isAtHand('absences') ? this.absences[person] : null;
   }
 
   /**

@@ -4,6 +4,9 @@ import { Busy } from '../functions/searches';
 import type { Solved } from '../functions/solved';
 import type { OurCell, WorkbookPort } from '../host/port';
 
+/** What the focus can stand on. */
+const FOCUSABLE = 'button, input, select, summary';
+
 /** A part of the pane that draws itself, looks at the workbook and acts on it. */
 export abstract class Panel {
   readonly title: string;
@@ -43,8 +46,16 @@ export abstract class Panel {
 
   protected abstract view(): TemplateResult;
 
+  /** Draws anew. The focus stays where it is, or goes to what stood before it if that is gone. */
   protected draw(): void {
+    const inFocus = (): Element | null => (this.element.getRootNode() as Document | ShadowRoot).activeElement;
+    const focused = inFocus();
+    const places = this.element.contains(focused) ? [...this.element.querySelectorAll<HTMLElement>(FOCUSABLE)] : [];
     render(html`${this.view()}<p role="status" class="dp-said" dir="auto">${this.#said}</p>`, this.element);
+    if (places.length === 0 || inFocus() === focused) return;
+    const at = places.findIndex((place) => place === focused);
+    const left = [...places.slice(0, at + 1).reverse(), ...places.slice(at + 1)].filter(({ isConnected }) => isConnected);
+    left[0]?.focus({ preventScroll: true });
   }
 
   /** A handler that carries a step out, one at a time, and says how it went. */

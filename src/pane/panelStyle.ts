@@ -14,13 +14,19 @@ export const PANEL_STYLE = `
 .dp-pane .dp-item > button { margin-left: 6px; padding: 1px 8px; min-height: 24px; font-size: 13px; }
 .dp-figure { margin: 10px 0; }
 .dp-figure figcaption { font-size: 13px; color: var(--dp-soft); }
-.dp-figure svg { display: block; width: 100%; max-width: 420px; height: auto; margin-top: 4px; }
-.dp-line { stroke: var(--dp-soft); stroke-width: 1; opacity: 0.7; }
-.dp-box { fill: var(--dp-good-ground); stroke: var(--dp-good); }
-.dp-box-short { fill: var(--dp-short-ground); stroke: var(--dp-short); }
-.dp-label { fill: var(--dp-ink); font-size: 11px; }
-.dp-seats { display: flex; flex-wrap: wrap; gap: 3px; }
-.dp-seat { width: 12px; height: 12px; border: 1.5px solid var(--dp-good); border-radius: 2px; background: var(--dp-good); }
+.dp-knot { display: grid; grid-template-columns: minmax(0, 1fr) 40px minmax(0, 1fr); margin: 6px 0; }
+.dp-side { display: flex; flex-direction: column; justify-content: space-around; }
+.dp-box {
+  height: var(--dp-box); padding: 2px 5px; overflow: hidden; border: 1px solid var(--dp-good); border-radius: 4px;
+  background: var(--dp-good-ground); font-size: 12.5px; line-height: 16px;
+}
+.dp-box .dp-clip { -webkit-line-clamp: 3; }
+.dp-box .dp-soft { font-size: 12.5px; }
+.dp-box-short { border-color: var(--dp-short); background: var(--dp-short-ground); }
+.dp-knot line { stroke: var(--dp-soft); }
+.dp-knot .dp-held { stroke: var(--dp-good); stroke-width: 3.5; }
+.dp-seat { display: inline-block; margin: 3px 3px 0 0; width: 11px; height: 11px; border: 1.5px solid var(--dp-good); border-radius: 2px; background: var(--dp-good); }
+.dp-striped { background: repeating-linear-gradient(45deg, var(--dp-good) 0 2px, transparent 2px 4px); }
 .dp-empty { border: 1.5px dashed var(--dp-short); background: transparent; }
 .dp-bars li { display: grid; grid-template-columns: 1fr auto; gap: 0 8px; padding: 3px 0; }
 .dp-bar-name { -webkit-line-clamp: 1; }
@@ -30,11 +36,12 @@ export const PANEL_STYLE = `
 .dp-room { border: 1px solid var(--dp-line); background: var(--dp-ground); }
 .dp-fill { background: var(--dp-good); }
 .dp-odd { background: var(--dp-short); }
+.dp-meter .dp-mark { border-right: 3px solid var(--dp-ink); border-radius: 0; }
+.dp-wide { grid-column: 1 / 3; }
 @media (forced-colors: active) {
-  .dp-fill, .dp-seat { background: CanvasText; forced-color-adjust: none; }
-  .dp-empty { background: Canvas; border-color: CanvasText; }
-  .dp-box, .dp-box-short { fill: Canvas; stroke: CanvasText; }
-  .dp-label { fill: CanvasText; }
-  .dp-line { stroke: CanvasText; }
+  .dp-fill, .dp-seat { background: CanvasText; border-color: CanvasText; forced-color-adjust: none; }
+  .dp-striped { background: repeating-linear-gradient(45deg, CanvasText 0 2px, Canvas 2px 4px); }
+  .dp-empty { background: Canvas; }
+  .dp-knot line, .dp-knot .dp-held { stroke: CanvasText; }
 }
 `;

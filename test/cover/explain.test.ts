@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { absences } from '../../src/cover/absences';
+import { absenceOf, absences } from '../../src/cover/absences';
 import { choices } from '../../src/cover/choices';
 import { remedies } from '../../src/cover/remedies';
 import { knots as knotsOfFlow, shortages, type Knot } from '../../src/cover/shortage';
@@ -60,6 +60,7 @@ describe('absences', () => {
         const answer = solved(spec);
         const { person } = back(spec, answer);
         for (const absence of absences(answer.kase, answer)) {
+          expect(absenceOf(answer.kase, answer, absence.person)).toEqual(absence);
           const p = person(absence.person);
           const away: Spec = {
             ...spec,
