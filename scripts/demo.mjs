@@ -52,7 +52,8 @@ export async function demoBook() {
   ];
   const answered = empty.map((one) => withAnswers(one, answer));
   const columns = columnNames(tables, names, answered.at(-1), PROOF_NAMES, columnLetters);
-  return { sheets: [sheet, ...answered], names: [...names, ...columns], lost: [] };
+  // The answers are what people want to see first.
+  return { sheets: [sheet, ...answered], names: [...names, ...columns], lost: [], active: 1 };
 }
 
 /** Names of the columns that the native formulas of the proof use: of the input tables, and of the proof itself. */

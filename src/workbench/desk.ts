@@ -116,7 +116,7 @@ export class Desk {
     try {
       const renamed = shortenSheetNames(workbook.model);
       const { toFile } = formatTable(this.#opened, engine);
-      const bytes = await saveXlsx({ ...fromEngine(workbook.model, toFile), otherNames: this.#opened.otherNames ?? [] });
+      const bytes = await saveXlsx(fromEngine(workbook.model, toFile, this.#opened));
       const address = URL.createObjectURL(new Blob([bytes as BlobPart]));
       const link = document.createElement('a');
       link.href = address;
@@ -141,7 +141,7 @@ export class Desk {
     workbook.model.off('command-dispatched', this);
     workbook.replace(model);
     draw(model);
-    activateResults(model);
+    activate(model, book.active ?? 0);
     this.#isChanged = false;
     model.on('command-dispatched', this, (command) => {
       if (engine.isCoreCommand(command)) this.#isChanged = true;
@@ -152,10 +152,10 @@ export class Desk {
   }
 }
 
-/** A sheet of results is what people want to see first. */
-function activateResults(model: EngineModel): void {
+/** Brings the sheet into view that was in view when the file was saved. */
+function activate(model: EngineModel, sheet: number): void {
   const { getters } = model;
-  const sheetIdTo = getters.getSheetIdByName('Results');
+  const sheetIdTo = getters.getSheetIds().at(sheet);
   const sheetIdFrom = getters.getActiveSheetId();
   if (sheetIdTo !== undefined && getters.isSheetVisible(sheetIdTo) && sheetIdTo !== sheetIdFrom) {
     model.dispatch('ACTIVATE_SHEET', { sheetIdFrom, sheetIdTo });

@@ -84,6 +84,29 @@ describe('a day at the desk', () => {
     await desk.page.close();
   });
 
+  it('takes sheets that were laid out back with one press of the undo key, and brings them again with one', async () => {
+    const desk = await DeskPage.open(site);
+    const names = () => desk.page.evaluate(() => window.dutyproof!.workbook.model.getters.getNamedRanges().map(({ name }) => name));
+    await desk.give({ 'week.csv': '\n' });
+    await desk.pane.getByRole('button', { name: 'Lay out empty tables' }).click();
+    await desk.pane.getByText('Fill the tables on Inputs').waitFor();
+    const [sheets, named] = [await desk.sheets(), await names()];
+    expect(named).toEqual(expect.arrayContaining(['Pairs', 'People', 'Duties', 'Rules']));
+    await desk.page.locator('.o-grid .o-composer').focus();
+    await desk.page.keyboard.press('Control+z');
+    await expect.poll(() => desk.sheets()).toEqual(['week']);
+    expect(await names()).toEqual([]);
+    await desk.pane.getByText('This workbook holds no formulas').waitFor();
+    await desk.page.keyboard.press('Control+y');
+    await expect.poll(() => desk.sheets()).toEqual(sheets);
+    expect(await names()).toEqual(named);
+    await paste(desk, 'Inputs!A4', PAIRS);
+    await paste(desk, 'Inputs!E4', PEOPLE);
+    await paste(desk, 'Inputs!I4', DUTIES);
+    await desk.pane.getByText('all covered').waitFor();
+    await desk.page.close();
+  });
+
   it('finds tables that are there, and says what it understood before it writes', async () => {
     const desk = await DeskPage.open(site);
     await desk.give({

@@ -56,6 +56,31 @@ describe('saving', () => {
     await desk.save();
   });
 
+  it('keeps the input checks of a file, which hold on the page, and the sheet in view', async () => {
+    const check =
+      '<dataValidations count="1"><dataValidation type="whole" operator="greaterThanOrEqual" sqref="A1:A9" showErrorMessage="1">' +
+      '<formula1>0</formula1></dataValidation></dataValidations>';
+    const cell = '<row r="1"><c r="A1"><v>1</v></c></row>';
+    await desk.give({ 'checked.xlsx': xlsx({ sheets: { S: cell, T: cell }, after: check }) });
+    await desk.page.locator('#file-name', { hasText: 'checked.xlsx' }).waitFor();
+    await desk.type('S!A2', '-1');
+    await desk.notice.getByText('The value must be greater or equal to 0').waitFor();
+    await desk.page.keyboard.press('Escape');
+    expect(await desk.valueAt('S!A2')).toBeNull();
+    await desk.type('S!A2', '4');
+    expect(await desk.valueAt('S!A2')).toBe(4);
+    await desk.page.locator('.o-sheet', { hasText: 'T' }).click();
+    const { bytes } = await desk.save();
+    const { sheets, active } = await openXlsx(bytes);
+    expect(active).toBe(1);
+    expect(sheets[0].checks).toEqual([
+      { ranges: ['A1:A9'], rule: { type: 'whole', operator: 'greaterThanOrEqual', formula1: '0', showErrorMessage: true } },
+    ]);
+    await desk.give({ 'again.xlsx': bytes });
+    await desk.page.locator('#file-name', { hasText: 'again.xlsx' }).waitFor();
+    await desk.page.locator('.o-sheet.active', { hasText: 'T' }).waitFor();
+  });
+
   it('shortens a sheet name that a file cannot hold, and says so', async () => {
     await desk.page.evaluate(() => {
       const { model } = window.dutyproof!.workbook;

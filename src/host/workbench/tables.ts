@@ -7,6 +7,7 @@ import type { Engine, EngineModel, EngineZone } from './engine';
 import { literal } from './literal';
 import { addAlarm } from './alarms';
 import { runBulk } from './bulk';
+import { addWholes } from './checks';
 import { widthInPixels } from './widths';
 
 const HEADING = { bold: true, fillColor: '#e3efe9' };
@@ -166,15 +167,7 @@ export class EngineTables {
       const size = widthInPixels(width);
       this.#model.dispatch('RESIZE_COLUMNS_ROWS', { sheetId, sheetName, dimension: 'COL', elements: [column], size });
     });
-    for (const { column, from, least } of wholes) {
-      const zone = { top: from, bottom: rows.length + SPARE_ROWS - 1, left: column, right: column };
-      const criterion = { type: 'isGreaterOrEqualTo', values: [String(least)] };
-      this.#model.dispatch('ADD_DATA_VALIDATION_RULE', {
-        sheetId,
-        ranges: [this.#model.getters.getRangeDataFromZone(sheetId, zone)],
-        rule: { id: crypto.randomUUID(), criterion, isBlocking: false },
-      });
-    }
+    for (const whole of wholes) addWholes(this.#model, sheetId, whole, rows.length + SPARE_ROWS - 1);
   }
 
   #regions(sheetId: string): Zone[] {
