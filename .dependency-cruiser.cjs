@@ -8,7 +8,7 @@ const rooms = [
   ['host', ['functions', 'sheet', 'cover', 'exact'], 'host/ adapts workbooks to the functions; it must not know the pane or a page.'],
   ['desk', ['functions', 'sheet', 'cover', 'exact', 'host'], 'desk/ turns cases into sheets and tables into cases; it knows the port, no page.'],
   ['pane', ['desk', 'functions', 'sheet', 'cover', 'exact', 'host'], 'pane/ shows what the functions answered, through the port.'],
-  ['workbench', ['functions', 'sheet', 'host'], 'workbench/ is the page around the sheet engine; the pane is put in by its entry.'],
+  ['workbench', ['functions', 'sheet', 'host', 'desk'], 'workbench/ is the page around the sheet engine; the pane is put in by its entry.'],
 ];
 
 module.exports = {

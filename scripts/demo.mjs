@@ -24,10 +24,9 @@ const HEADING_ROW = 1;
 
 /** @returns {Promise<any>} the demo as a book */
 export async function demoBook() {
-  const [sheets, reasons, { PROOF_NAMES }, { invoke }, { Journal }, { FUNCTIONS }, { columnLetters }] = await Promise.all(
+  const [sheets, { PROOF_NAMES }, { invoke }, { Journal }, { FUNCTIONS }, { columnLetters }] = await Promise.all(
     [
-      'src/workbench/answerSheets.ts',
-      'src/workbench/reasonSheets.ts',
+      'src/workbench/demoSheets.ts',
       'src/functions/proofChecks.ts',
       'src/functions/invoke.ts',
       'src/functions/journal.ts',
@@ -48,12 +47,13 @@ export async function demoBook() {
   const empty = [
     sheets.resultsSheet('Results', PARAMETERS),
     sheets.gridSheet('Grid', PARAMETERS, tables.People.length - 1),
-    reasons.reasonsSheet('Why', PARAMETERS),
-    reasons.proofSheet('Proof', PARAMETERS),
+    sheets.reasonsSheet('Why', PARAMETERS),
+    sheets.proofSheet('Proof', PARAMETERS),
   ];
   const answered = empty.map((one) => withAnswers(one, answer));
   const columns = columnNames(tables, names, answered.at(-1), PROOF_NAMES, columnLetters);
-  return { sheets: [sheet, ...answered], names: [...names, ...columns], lost: [] };
+  // The answers are what people want to see first.
+  return { sheets: [sheet, ...answered], names: [...names, ...columns], lost: [], active: 1 };
 }
 
 /** Names of the columns that the native formulas of the proof use: of the input tables, and of the proof itself. */

@@ -74,12 +74,37 @@ const tables = scenario();
 const drafts = handOverSheets(new Solved([...['Pairs', 'People', 'Duties', 'Rules'].map((name) => tables[name]), null]), '1 December 2026', 'Handed');
 const handed = bookOf(drafts);
 
-/** Gives the first seat of the plan to someone else. */
-function reassigned(person) {
-  const change = (cell) => (cell.row === 1 && cell.column === 1 ? { ...cell, value: person } : cell);
+/** Puts something else into a cell of the plan's first row, by column from 0; text that begins with = is a formula. */
+function altered(column, content) {
+  const other = typeof content === 'string' && content.startsWith('=') ? { formula: content, value: null } : { value: content };
+  const change = (cell) => (cell.row === 1 && cell.column === column ? { ...cell, ...other } : cell);
   const sheets = handed.sheets.map((sheet) => (sheet.name === 'Plan by duty' ? { ...sheet, cells: sheet.cells.map(change) } : sheet));
   return { ...handed, sheets };
 }
+
+const NAMES = ['=Ann', '>5', '*', '?', 'TRUE', '5', '<b>', 'x'.repeat(1_000)];
+const odd = handOverSheets(
+  new Solved([
+    [['Duty', 'Person'], ...NAMES.map((name, i) => [`${name} ${i}`, name])],
+    [['Person', 'Maximum'], ...NAMES.map((name) => [name, 1])],
+    [['Duty', 'Need', 'Slot', 'Group'], ...NAMES.map((name, i) => [`${name} ${i}`, 1, name, NAMES.at(-1 - i)])],
+    [['Rule', 'Duty', 'Person', 'Value'], ['Limit', '*', '', 1], ['Limit', '>5', '>5', 1]],
+    null,
+  ]),
+  '1 December 2026',
+  'Odd',
+);
+const timed = handOverSheets(
+  new Solved([
+    [['Duty', 'Person'], ['Dawn', 'Ada'], ['Noon', 'Bo'], ['Dusk', 'Ada'], ['Dusk', 'Bo']],
+    [['Person', 'Maximum'], ['Ada', 2], ['Bo', 2]],
+    [['Duty', 'Need', 'Start', 'End'], ['Dawn', 1, 46000.25, 46000.5], ['Noon', 1, 46000.45, 46000.6], ['Dusk', 1, 46000.75, 46000.9]],
+    [['Rule', 'Duty', 'Person', 'Value'], ['Rest', '', '', 60], ['Clash', 'Dawn', '', 'Noon']],
+    null,
+  ]),
+  '1 December 2026',
+  'Timed',
+);
 
 const CASES = [
   ['The proof as it is', book, PROOF_VERDICT, /^holds$/u],
@@ -88,7 +113,13 @@ const CASES = [
   ['The proof with a bound changed', tampered(book, 'Bound', 5, 7), PROOF_VERDICT, /^does not hold$/u],
   ['The proof with a total changed', tampered(book, 'Total', 4, 52), PROOF_VERDICT, /^does not hold$/u],
   ['The plan handed over', handed, HANDED_VERDICT, /^All is well/u],
-  ['The plan handed over with a seat given to a stranger', reassigned('Nobody at all'), HANDED_VERDICT, /^Something is wrong/u],
+  ['The plan handed over with a seat given to a stranger', altered(1, 'Nobody at all'), HANDED_VERDICT, /^Wrong/u],
+  ['The same with a pattern for a person', altered(1, '*'), HANDED_VERDICT, /^Wrong/u],
+  ['The same with an error for a person', altered(1, '=1/0'), HANDED_VERDICT, /^Wrong/u],
+  ['The same with a pattern for a slot', altered(2, '*'), HANDED_VERDICT, /^Wrong/u],
+  ['The same with a number for a person', altered(1, 5), HANDED_VERDICT, /^Wrong/u],
+  ['A plan with names that are signs of a condition', bookOf(odd), HANDED_VERDICT, /^All is well/u],
+  ['A plan with times and rest', bookOf(timed), HANDED_VERDICT, /^All is well/u],
 ];
 
 let failed = 0;

@@ -28,7 +28,7 @@ const page = await browser.newPage({ viewport: { width: 1400, height: 900 } });
 await page.goto(`${server.origin}/workbench.html`);
 await page.locator('#pane main').getByText('uncovered').first().waitFor();
 await page.setInputFiles('#files', files);
-await page.getByText('Answer these tables').click();
+await page.locator('#pane main').getByRole('button', { name: 'Put the answers on new sheets' }).click();
 await page.locator('#pane main').getByText(`of ${duties.toLocaleString('en-GB')} seats covered`).waitFor();
 const answers = await page.evaluate(() => {
   const { getters } = window.dutyproof.workbook.model;

@@ -1,13 +1,14 @@
 import type { DraftCell, SheetDraft } from '../host/port';
 
 /** What is put on a sheet of answers: a function, its title, and the widths of its columns in characters. */
-interface Answer {
+export interface Answer {
   readonly id: string;
   readonly title: string;
   readonly widths: readonly number[];
 }
 
-const RESULTS: readonly Answer[] = [
+/** What is asked of every case. */
+export const RESULTS: readonly Answer[] = [
   { id: 'SUMMARY', title: 'At a glance', widths: [18, 28] },
   { id: 'ASSIGN', title: 'Who takes what', widths: [28, 22, 7, 12] },
   { id: 'UNCOVERED', title: 'What stays uncovered', widths: [28, 7, 7, 9, 12, 70] },
@@ -15,25 +16,41 @@ const RESULTS: readonly Answer[] = [
   { id: 'FINDINGS', title: 'What is odd in the tables', widths: [10, 7, 26, 70] },
 ];
 
-const REASONS: readonly Answer[] = [
+/** Why it is so. */
+export const REASONS: readonly Answer[] = [
   { id: 'BOTTLENECKS', title: 'Why seats stay uncovered', widths: [12, 44, 30, 9, 8, 7, 80] },
   { id: 'REMEDIES', title: 'The cheapest remedy', widths: [7, 18, 22, 28, 7] },
   { id: 'ABSENCES', title: 'If one person were away', widths: [22, 8, 8, 40, 60] },
 ];
 
+const GRID: Answer = { id: 'GRID', title: 'The plan as a grid', widths: [28] };
+
 const MOVES: Answer = { id: 'STEPS', title: 'The moves from the current plan', widths: [6, 28, 22, 22, 36] };
+
+/** How much the answers of a case fill, about. */
+export interface CaseSize {
+  /** Seats, people or duties, whichever are most. */
+  readonly rows: number;
+  readonly people: number;
+  /** True where some answers would make every keystroke slow. */
+  readonly isLarge: boolean;
+}
 
 /**
  * Sheets that answer a case: the answers beside each other, each with free columns up to the next, so
  * that none gets in the way of another.
  *
  * @param given the arguments as a formula takes them, in order; '' for one that is left out
- * @param isLarge leaves out what would make every keystroke slow in a large case
+ * @param size of the case
  */
-export function answerDrafts(given: readonly string[], isLarge = false): SheetDraft[] {
+export function answerDrafts(given: readonly string[], { rows, people, isLarge }: CaseSize): SheetDraft[] {
   const withCurrent = given[4] !== undefined && given[4] !== '';
   const reasons = isLarge ? REASONS.slice(0, 1) : REASONS;
-  return [sheet('Results', RESULTS, given), sheet('Why', withCurrent ? [MOVES, ...reasons] : reasons, given)];
+  // A case grows with the term.
+  const room = { rows: 2 * rows, columns: 0 };
+  const grids = isLarge ? [] : [{ ...sheet('Grid', [GRID], given), room: { ...room, columns: 2 * people } }];
+  const why = { ...sheet('Why', withCurrent ? [MOVES, ...reasons] : reasons, given), room };
+  return [{ ...sheet('Results', RESULTS, given), room }, ...grids, why];
 }
 
 /** A call of one of our functions; arguments left out at the end are not written. */

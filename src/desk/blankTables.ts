@@ -70,11 +70,23 @@ const HEADING_ROW = 2;
  * @returns the sheets, the first with the tables
  */
 export async function blankDrafts(port: WorkbookPort): Promise<SheetDraft[]> {
+  const inputs = await tableSheet(port, 'Inputs', TABLES);
+  return [inputs, ...answerDrafts(inputs.names.map(({ name }) => name), { rows: 2 * ROOM, people: ROOM / 2, isLarge: false })];
+}
+
+/** An empty table for rules alone, for a case that has none: decisions need a place to stand in. */
+export async function blankRules(port: WorkbookPort): Promise<SheetDraft & { readonly reference: string }> {
+  const draft = await tableSheet(port, 'Rules', TABLES.filter(({ name }) => name === 'Rules'));
+  return { ...draft, reference: draft.names[0].name };
+}
+
+/** Tables beside each other on a sheet, each with a name of its own. */
+async function tableSheet(port: WorkbookPort, sheet: string, tables: readonly Table[]): Promise<SheetDraft & Required<Pick<SheetDraft, 'names'>>> {
   const rows: DraftCell[][] = [[], [], []];
   const widths: number[] = [];
   const names: { name: string; cells: string }[] = [];
   const wholes: { column: number; from: number; least: number }[] = [];
-  for (const { name, title, columns } of TABLES) {
+  for (const { name, title, columns } of tables) {
     const left = widths.length;
     rows[0][left] = title;
     columns.forEach(({ heading, meaning, width, least }, c) => {
@@ -88,8 +100,7 @@ export async function blankDrafts(port: WorkbookPort): Promise<SheetDraft[]> {
     widths.push(3);
   }
   const squared = rows.map((row) => Array.from({ length: widths.length - 1 }, (_, i) => row[i] ?? null));
-  const inputs: SheetDraft = { name: 'Inputs', rows: squared, titleRows: [0], headingRows: [HEADING_ROW], widths, names, wholes };
-  return [inputs, ...answerDrafts(names.map(({ name }) => name))];
+  return { name: sheet, rows: squared, titleRows: [0], headingRows: [HEADING_ROW], widths, names, wholes };
 }
 
 async function freeName(port: WorkbookPort, name: string): Promise<string> {

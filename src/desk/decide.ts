@@ -1,4 +1,4 @@
-import { formatAddress, parseAddress, parseZone } from '../host/address';
+import { columnLetters, formatAddress, parseAddress, parseReference, parseZone } from '../host/address';
 import type { DraftCell, WorkbookPort } from '../host/port';
 import { cellText } from '../sheet/cell';
 import { nameKey } from '../sheet/name';
@@ -11,9 +11,8 @@ export interface Decision {
   readonly word: 'Fixed' | 'Barred';
   readonly duty: string;
   readonly person: string;
-  /** The first cell of its row in the table, and how wide that is. */
-  readonly address: string;
-  readonly width: number;
+  /** The cells of its rule, duty, person and value. */
+  readonly cells: readonly string[];
 }
 
 /**
@@ -44,11 +43,18 @@ export function argumentsOf(formula: string): string[] | null {
   return null;
 }
 
-/** The reference of an argument of a case, by its place from 0; null where the formula gives none. */
+/**
+ * The reference of an argument of a case, by its place from 0, as it can be read from anywhere: a range
+ * on the formula's own sheet is given that sheet's name.
+ * @returns null where the formula gives none
+ */
 export async function argumentAt(port: WorkbookPort, cell: string, place: number): Promise<string | null> {
   const [formula] = await port.formulasAt([cell]);
   const argument = formula === null ? undefined : argumentsOf(formula)?.[place];
-  return argument === undefined || argument === '' ? null : argument;
+  if (argument === undefined || argument === '') return null;
+  const cells = argument.replaceAll('$', '').replace(/#$/u, '');
+  const sheet = parseAddress(cell)?.sheet;
+  return sheet !== undefined && parseReference(cells, 0) !== null ? formatAddress({ sheet, cell: cells }) : argument;
 }
 
 /** The decisions that stand in the rules of a case, in the order of their rows. */
@@ -57,14 +63,14 @@ export async function decisionsOf(port: WorkbookPort, cell: string): Promise<Dec
   const block = reference === null ? null : await port.read(reference);
   if (block === null) return [];
   const { sheet, cell: cells } = parseAddress(block.address)!;
-  const { top } = parseZone(cells)!;
-  const letters = cells.replace(/\d.*$/u, '');
+  const { top, left } = parseZone(cells)!;
   const place = placesOf(block.values);
   return block.values.flatMap((row, r): Decision[] => {
     const [rule, duty, person] = COLUMNS.map((_, i) => cellText(row[place[i]]));
     const word = (['Fixed', 'Barred'] as const).find((one) => nameKey(one) === nameKey(rule));
     if (word === undefined) return [];
-    return [{ word, duty, person, address: formatAddress({ sheet, cell: `${letters}${top + r + 1}` }), width: row.length }];
+    const own = place.filter((c) => c < row.length).map((c) => formatAddress({ sheet, cell: `${columnLetters(left + c)}${top + r + 1}` }));
+    return [{ word, duty, person, cells: own }];
   });
 }
 
@@ -83,13 +89,17 @@ export async function decide(port: WorkbookPort, cell: string, word: Decision['w
   const place = placesOf(block.values);
   [word, duty, person].forEach((text, i) => (row[place[i]] = text));
   const address = await port.appendRow(reference, row);
-  if (address === null) return `The rules table ${reference} has no blank row left. Insert one inside it, then press again.`;
+  if (address === null) return `The rules table ${reference} has no blank row left. Insert one inside it, or let the formulas take a longer range, then press again.`;
   return `${word}: ${person}, ${duty}. It stands in ${address} and can be taken away there or below.`;
 }
 
-/** Takes a decision away. */
-export async function undecide(port: WorkbookPort, { address, width, word, duty, person }: Decision): Promise<string> {
-  await port.write(address, [Array.from({ length: width }, () => null)]);
+/** Takes a decision away, and leaves what else stands in its row. */
+export async function undecide(port: WorkbookPort, cell: string, decision: Decision): Promise<string> {
+  const { word, duty, person, cells } = decision;
+  // Rows may have moved since the decision was read.
+  const stands = (await decisionsOf(port, cell)).some((one) => JSON.stringify(one) === JSON.stringify(decision));
+  if (!stands) return `${cells[0]} no longer holds this decision: the rules have changed meanwhile. Look again.`;
+  for (const own of cells) await port.write(own, [[null]]);
   return `Taken away: ${word}, ${person}, ${duty}.`;
 }
 

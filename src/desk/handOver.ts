@@ -3,7 +3,8 @@ import { proofWords } from '../functions/proofWords';
 import { FUNCTIONS } from '../functions/registry';
 import type { Solved } from '../functions/solved';
 import type { DraftCell, SheetDraft } from '../host/port';
-import { checkSheet, NONE, type CheckSheet } from './handOverCheck';
+import { labelsOf } from './checkTables';
+import { checkSheet, PLAN_NAMES, type CheckSheet } from './handOverCheck';
 
 /**
  * Sheets of plain values that can be sent to people without the add-in: what was decided, by duty and
@@ -16,12 +17,12 @@ import { checkSheet, NONE, type CheckSheet } from './handOverCheck';
  */
 export function handOverSheets(solved: Solved, day: string, prefix: string): SheetDraft[] {
   const kase = solved.case;
-  const plan = planSheet(solved, prefix);
-  const check = checkSheet(solved, prefix);
+  const seats = planRows(solved);
+  const check = checkSheet(solved, prefix, Math.max(1, seats.length));
   const moves = kase.current === null ? [] : [listSheet(solved, 'STEPS', 'Moves', [6, 30, 24, 24, 30])];
   return [
     coverSheet(solved, day, check),
-    plan,
+    planSheet(seats, prefix, check),
     peopleSheet(solved),
     listSheet(solved, 'UNCOVERED', 'Uncovered', [30, 8, 8, 9, 11, 90]),
     ...moves,
@@ -55,33 +56,56 @@ function coverSheet(solved: Solved, day: string, { verdict }: CheckSheet): Sheet
     [null],
     ['Signed by', null],
     [null],
-    [CAUTION],
-    ['The plan was made from the tables as they stood on the date above. It is plain text and numbers; only the check is calculated.'],
+    ...inLines(CAUTION),
+    [null],
+    ...inLines('The plan was made from the tables as they stood on the date above. It is plain text and numbers; only the check is calculated.'),
   ];
   return { name: 'Handed over', rows, titleRows: [0], widths: [26, 60], alarms: ['B9'] };
 }
 
-/** A row a seat: duty, person, slot and group, load where loads are used, and the note. */
-function planSheet(solved: Solved, prefix: string): SheetDraft {
+/** A text in rows that fit on a printed page. */
+function inLines(text: string): DraftCell[][] {
+  const lines = [''];
+  for (const word of text.split(' ')) {
+    const longer = `${lines.at(-1)} ${word}`.trim();
+    if (longer.length <= LINE) lines[lines.length - 1] = longer;
+    else lines.push(word);
+  }
+  return lines.map((line) => [line]);
+}
+
+/** Letters to a line: the widths of both columns of the cover sheet, less what wide letters take. */
+const LINE = 80;
+
+/** A row a seat: duty, person, slot, group, load, and the note. */
+function planRows(solved: Solved): DraftCell[][] {
   const kase = solved.case;
   const byName = new Map(kase.duties.map((duty) => [duty.name, duty]));
-  const label = (keys: readonly string[]): string => (keys.length === 0 ? NONE : (kase.labelNames.get(keys[0]) ?? keys[0]));
-  // Where there are no seats at all, the answer is a sentence.
-  const rows = spilled(solved, 'ASSIGN').slice(1).filter(([duty]) => byName.has(String(duty)));
-  const body = rows.map(([duty, person, , note]): DraftCell[] => {
-    const entry = byName.get(String(duty));
-    return [duty, person, label(entry?.slots ?? []), label(entry?.groups ?? []), entry?.load ?? 0, note];
-  });
-  const last = Math.max(1, body.length) + 1;
-  const names = ['PlanDuty', 'PlanPerson', 'PlanSlot', 'PlanGroup', 'PlanLoad'];
+  return spilled(solved, 'ASSIGN')
+    .slice(1)
+    .flatMap(([duty, person, , note]): DraftCell[][] => {
+      const entry = byName.get(String(duty));
+      // Where there are no seats at all, the answer is a sentence.
+      return entry === undefined ? [] : [[duty, person, labelsOf(kase, entry.slots), labelsOf(kase, entry.groups), entry.load, note]];
+    });
+}
+
+/** The seats, each row with the fault that the check finds in it. */
+function planSheet(seats: readonly (readonly DraftCell[])[], prefix: string, { faultOfRow }: CheckSheet): SheetDraft {
+  const last = Math.max(1, seats.length) + 1;
+  const names = Object.entries(PLAN_NAMES).map(([name, letter]) => ({ name: prefix + name, cells: `${letter}2:${letter}${last}` }));
   return {
     name: 'Plan by duty',
-    rows: [['Duty', 'Person', 'Slot', 'Group', 'Load', 'Note'], ...body],
+    rows: [['Duty', 'Person', 'Slot', 'Group', 'Load', 'Note', 'Check'], ...seats.map((row) => [...row, { formula: faultOfRow }])],
     headingRows: [0],
-    widths: [30, 24, 14, 14, 6, 14],
-    names: names.map((name, i) => ({ name: prefix + name, cells: `${'ABCDE'[i]}2:${'ABCDE'[i]}${last}` })),
+    widths: [30, 24, 14, 14, 6, 14, 34],
+    names: [...names, { name: `${prefix}PlanAround`, cells: `A1:B${last + BELOW}` }],
+    alarms: [`G2:G${last}`],
   };
 }
+
+/** Rows below the plan that are watched. */
+const BELOW = 300;
 
 function peopleSheet(solved: Solved): SheetDraft {
   const kase = solved.case;

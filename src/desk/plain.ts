@@ -1,41 +1,68 @@
-import { formatAddress, parseAddress, parseZone, formatZone } from '../host/address';
+import { bytesToHex } from '@noble/hashes/utils.js';
+import { sha256 } from '@noble/hashes/sha2.js';
+import { formatAddress, formatZone, parseAddress, parseZone } from '../host/address';
 import type { DraftCell, OurCell, WorkbookPort } from '../host/port';
+import type { Range } from '../sheet/range';
 
 /** The sheet that remembers which formulas were made plain. */
 const KEPT = 'Formulas kept';
-const HEADINGS = ['Cell', 'Formula', 'Rows', 'Columns'];
+const HEADINGS = ['Cell', 'Formula', 'Rows', 'Columns', 'Values'];
+/** Formulas that can be kept at one time. */
+const ROOM = 400;
 
-/**
- * Replaces the formulas of ours on a sheet by what they show, and keeps them on a sheet of their own.
- * @returns how many were replaced
- */
-export async function makePlain(port: WorkbookPort, sheet: string): Promise<number> {
-  const cells = (await port.ourCells()).filter(({ address }) => parseAddress(address)?.sheet === sheet);
-  if (cells.length === 0) return 0;
-  const rows = cells.map(({ address, formula, values }): DraftCell[] => [address, formula, values.length, values[0].length]);
-  await keep(port, rows);
-  for (const { address, values } of cells) await port.write(address, values.map((row) => row.map(plainCell)));
-  return cells.length;
+/** What became of formulas that were to be replaced or put back. */
+export interface Exchange {
+  readonly done: number;
+  /** For each formula that was left, why, in words. */
+  readonly left: readonly string[];
 }
 
 /**
- * Puts formulas that were made plain back into their cells.
- * @returns how many were put back
+ * Replaces the formulas of ours on a sheet by what they show, and keeps them on a sheet of their own.
+ * What shows an error, or is still being worked out, is left as it is.
  */
-export async function makeLive(port: WorkbookPort, sheet: string): Promise<number> {
-  const kept = await port.read(formatAddress({ sheet: KEPT, cell: KEPT_CELLS }));
-  const rows = (kept?.values ?? []).slice(1).map((row, i) => ({ row, at: i + 2 }));
-  let count = 0;
-  for (const { row: [address, formula, height, width], at } of rows) {
-    const parsed = typeof address === 'string' ? parseAddress(address) : null;
-    if (parsed?.sheet !== sheet || typeof address !== 'string' || typeof formula !== 'string') continue;
-    // What was spilled must be blank before the formula can fill it again.
-    await port.write(address, Array.from({ length: Number(height) }, () => Array.from({ length: Number(width) }, () => null)));
-    await port.write(address, [[{ formula }]]);
-    await port.write(formatAddress({ sheet: KEPT, cell: `A${at}` }), [[null, null, null, null]]);
-    count++;
+export async function makePlain(port: WorkbookPort, sheet: string): Promise<Exchange> {
+  const cells = (await port.ourCells()).filter(({ address }) => parseAddress(address)?.sheet === sheet);
+  const left: string[] = [];
+  let done = 0;
+  const shown = await port.shownBy(cells.map(({ address }) => address));
+  for (const [i, { address, formula }] of cells.entries()) {
+    const values = shown[i];
+    if (!hasAnswer(values)) {
+      left.push(`${address} shows no answer.`);
+      continue;
+    }
+    const plain = values.map((row) => row.map(plainCell));
+    // Kept before it is replaced: a formula is never lost.
+    const isKept = await keep(port, [address, formula, plain.length, plain[0].length, digest(plain)]);
+    if (!isKept) {
+      left.push(`${address}: the sheet ${KEPT} is full. Make formulas live again, or delete rows there.`);
+      continue;
+    }
+    await port.write(address, plain);
+    done++;
   }
-  return count;
+  return { done, left };
+}
+
+/** Puts formulas that were made plain back into their cells, where the cells still hold just what was put there. */
+export async function makeLive(port: WorkbookPort, sheet: string): Promise<Exchange> {
+  const left: string[] = [];
+  let done = 0;
+  for (const { address, formula, zone, digest: expected, row } of await keptFormulas(port)) {
+    if (parseAddress(address)?.sheet !== sheet) continue;
+    const block = await port.read(zone);
+    if (block === null || digest(block.values) !== expected) {
+      left.push(`${zone} does not hold what was put there: rows were moved or cells changed. The formula is kept in ${formatAddress({ sheet: KEPT, cell: `B${row}` })}.`);
+      continue;
+    }
+    // What was spilled must be blank before the formula can fill it again.
+    await port.write(address, block.values.map((cells) => cells.map(() => null)));
+    await port.write(address, [[{ formula }]]);
+    await port.write(formatAddress({ sheet: KEPT, cell: `A${row}` }), [HEADINGS.map(() => null)]);
+    done++;
+  }
+  return { done, left };
 }
 
 /** How it stands with formulas and plain values. */
@@ -48,19 +75,17 @@ export interface PlainState {
   readonly lost: readonly OurCell[];
 }
 
-/** Looks through the workbook once. */
-export async function plainState(port: WorkbookPort): Promise<PlainState> {
-  const sheetsOf = (addresses: readonly unknown[]): string[] => [
-    ...new Set(addresses.flatMap((address) => (typeof address === 'string' ? (parseAddress(address)?.sheet ?? []) : []))),
-  ];
-  const names = await port.sheetNames();
-  const kept = names.includes(KEPT) ? await port.read(formatAddress({ sheet: KEPT, cell: KEPT_CELLS })) : null;
-  const cells = await port.ourCells();
+/** @param cells all that the port knows of ours */
+export async function plainState(port: WorkbookPort, cells: readonly OurCell[]): Promise<PlainState> {
   return {
-    live: sheetsOf(cells.map(({ address }) => address)),
-    plain: sheetsOf((kept?.values ?? []).slice(1).map(([address]) => address)),
-    lost: cells.filter(({ formula, values }) => isLost(values[0]?.[0]) || mended(formula) !== formula),
+    live: sheetsOf(cells),
+    plain: sheetsOf(await keptFormulas(port)),
+    lost: cells.filter(({ formula, value }) => isLost(value) || mended(formula) !== formula),
   };
+}
+
+function sheetsOf(cells: readonly { readonly address: string }[]): string[] {
+  return [...new Set(cells.flatMap(({ address }) => parseAddress(address)?.sheet ?? []))];
 }
 
 /**
@@ -68,25 +93,65 @@ export async function plainState(port: WorkbookPort): Promise<PlainState> {
  * @returns how many
  */
 export async function repair(port: WorkbookPort): Promise<number> {
-  const { lost } = await plainState(port);
+  const { lost } = await plainState(port, await port.ourCells());
   for (const { address, formula } of lost) await port.write(address, [[{ formula: mended(formula) }]]);
   return lost.length;
 }
 
-/** A formula as a person types it: `_xldudf_DUTY_ASSIGN(` and `@DUTY.ASSIGN(` are both `DUTY.ASSIGN(`. */
+/**
+ * A formula as a person types it, whatever a file or another program has made of it: of
+ * `_xldudf_DUTY_ASSIGN(`, `_xlfn._xldudf_DUTY_ASSIGN(`, `@DUTY.ASSIGN(` and `duty_assign (` each is
+ * `DUTY.ASSIGN(`. Texts in quotes stay.
+ */
 export function mended(formula: string): string {
-  return formula.replace(/@?(?:_xldudf_)?DUTY[._]([A-Z]+)\(/giu, (_, id: string) => `DUTY.${id.toUpperCase()}(`);
+  const call = /(?<![A-Z0-9_.])@?(?:_xl[a-z]+[._])*DUTY[._]([A-Z]+)\s*\(/giu;
+  const parts = formula.split(/("(?:[^"]|"")*")/u);
+  return parts.map((part, i) => (i % 2 === 1 ? part : part.replace(call, (_, id: string) => `DUTY.${id.toUpperCase()}(`))).join('');
 }
 
-const KEPT_CELLS = formatZone(parseZone('A1:D400')!);
+/** A formula on the sheet of those kept. */
+interface Kept {
+  readonly address: string;
+  readonly formula: string;
+  /** The cells its values were put into. */
+  readonly zone: string;
+  readonly digest: string;
+  /** Its row on the sheet. */
+  readonly row: number;
+}
 
-async function keep(port: WorkbookPort, rows: readonly DraftCell[][]): Promise<void> {
-  const names = await port.sheetNames();
-  if (!names.includes(KEPT)) {
-    await port.addSheets([{ name: KEPT, rows: [HEADINGS, ...rows], headingRows: [0], widths: [24, 60, 8, 8] }]);
-    return;
-  }
-  for (const row of rows) await port.appendRow(formatAddress({ sheet: KEPT, cell: KEPT_CELLS }), row);
+const KEPT_CELLS = formatAddress({ sheet: KEPT, cell: `A1:E${ROOM}` });
+
+async function keptFormulas(port: WorkbookPort): Promise<Kept[]> {
+  if (!(await port.sheetNames()).includes(KEPT)) return [];
+  const { values = [] } = (await port.read(KEPT_CELLS)) ?? {};
+  return values.slice(1).flatMap(([address, formula, rows, columns, hash], i): Kept[] => {
+    if (typeof address !== 'string' || typeof formula !== 'string' || typeof hash !== 'string') return [];
+    const parsed = parseAddress(address);
+    const zone = parsed === null ? null : parseZone(parsed.cell);
+    if (parsed === null || zone === null) return [];
+    const all = { ...zone, bottom: zone.top + Number(rows) - 1, right: zone.left + Number(columns) - 1 };
+    return [{ address, formula, zone: formatAddress({ sheet: parsed.sheet, cell: formatZone(all) }), digest: hash, row: i + 2 }];
+  });
+}
+
+/** @returns false where there is no room */
+async function keep(port: WorkbookPort, row: readonly DraftCell[]): Promise<boolean> {
+  if ((await port.sheetNames()).includes(KEPT)) return (await port.appendRow(KEPT_CELLS, row)) !== null;
+  const [name] = await port.addSheets([{ name: KEPT, rows: [HEADINGS, row], headingRows: [0], widths: [24, 60, 8, 8, 20] }]);
+  return name === KEPT;
+}
+
+/** Tells whether cells still hold the same. Blank cells are blank, whatever the host reads them as. */
+function digest(values: Range): string {
+  const text = JSON.stringify(values.map((row) => row.map((cell) => (cell === '' || cell === undefined ? null : cell))));
+  return bytesToHex(sha256(new TextEncoder().encode(text))).slice(0, 16);
+}
+
+function hasAnswer(values: Range): boolean {
+  const [[first] = []] = values;
+  const isError = typeof first === 'object' && first !== null;
+  return first !== undefined && first !== null && !isError && !(typeof first === 'string' && /^#[A-Z_/0!?]+$/u.test(first));
 }
 
 function isLost(value: unknown): boolean {

@@ -84,7 +84,8 @@ function append(upper: Block, lower: Block): Block {
     ...Array.from({ length: more.top - zone.bottom - 1 }, blank),
     ...lower.values.map((row) => Array.from({ length: width }, (_, c) => row[c - (more.left - zone.left)] ?? null)),
   ];
-  return { name: null, address: formatAddress({ sheet, cell: formatZone({ ...zone, bottom: more.bottom }) }), values };
+  const address = formatAddress({ sheet, cell: formatZone({ ...zone, bottom: more.bottom }) });
+  return { name: null, address, values, room: lower.room ?? 0 };
 }
 
 /** What a block could be, likeliest first. */
@@ -140,7 +141,7 @@ export function turn(one: Candidate, people: Candidate | undefined): Candidate {
   const count = (names: readonly unknown[]): number => names.filter((name) => text(name) !== '' && known.has(nameKey(text(name)))).length;
   if (count(one.values.slice(1).map(([name]) => name)) <= count((one.values[0] ?? []).slice(1))) return one;
   const values = one.values[0].map((_, c) => one.values.map((row) => row[c]));
-  return { ...one, values, argument: `DUTY.PAIRS(TRANSPOSE(${one.block.name ?? one.block.address}))` };
+  return { ...one, values, argument: `DUTY.PAIRS(TRANSPOSE(${referenceTo(one.block)}))` };
 }
 
 function bySize(a: Candidate, b: Candidate): number {
@@ -157,7 +158,7 @@ function text(cell: unknown): string {
 }
 
 function asList(block: Block, role: Role, meanings: readonly string[]): Candidate {
-  const reference = block.name ?? block.address;
+  const reference = referenceTo(block);
   const expected = POSITIONS[role];
   const ours = (word: string): boolean => (block.values[0] ?? []).some((cell) => nameKey(text(cell)) === nameKey(word));
   const keys = role === 'pairs' || role === 'current' ? ['Duty', 'Person'] : role === 'people' ? ['Person', 'Maximum'] : [expected[0]];
@@ -167,7 +168,7 @@ function asList(block: Block, role: Role, meanings: readonly string[]): Candidat
   const known = meanings.map((word) => word || null);
   const inOrder = known.every((word, i) => word === null || word === expected[i]) && keys.every((word, i) => known[i] === word);
   const below = withoutFirstRow(block);
-  if (inOrder && meanings.length <= expected.length) return { ...common, argument: below.address, values: below.values, obstacle: '' };
+  if (inOrder && meanings.length <= expected.length) return { ...common, argument: referenceTo(below), values: below.values, obstacle: '' };
   const wrong = (block.values[0] ?? []).flatMap((cell, i) =>
     meanings[i] !== '' && !ours(meanings[i]) && keys.includes(meanings[i]) ? [`"${text(cell)}" to ${meanings[i]}`] : [],
   );
@@ -176,10 +177,19 @@ function asList(block: Block, role: Role, meanings: readonly string[]): Candidat
   return { ...common, argument: reference, values: block.values, obstacle: `${cures.join('. ')}.` };
 }
 
-function withoutFirstRow(block: Block): Pick<Block, 'address' | 'values'> {
+function withoutFirstRow(block: Block): Block {
   const { sheet, cell } = parseAddress(block.address)!;
   const zone = parseZone(cell)!;
-  return { address: formatAddress({ sheet, cell: formatZone({ ...zone, top: zone.top + 1 }) }), values: block.values.slice(1) };
+  const address = formatAddress({ sheet, cell: formatZone({ ...zone, top: zone.top + 1 }) });
+  return { ...block, name: null, address, values: block.values.slice(1) };
+}
+
+/** As a formula takes a table: by its name, or its cells with the blank rows below, which will be typed into. */
+function referenceTo({ name, address, room = 0 }: Block): string {
+  if (name !== null) return name;
+  const { sheet, cell } = parseAddress(address)!;
+  const zone = parseZone(cell)!;
+  return formatAddress({ sheet, cell: formatZone({ ...zone, bottom: zone.bottom + room }) });
 }
 
 /** Names down and across, and marks, ranks or nothing in between. */
@@ -196,6 +206,6 @@ function isGrid(values: Range): boolean {
 }
 
 function asGrid(block: Block): Candidate {
-  const reference = block.name ?? block.address;
+  const reference = referenceTo(block);
   return { role: 'pairs', block, argument: `DUTY.PAIRS(${reference})`, values: block.values, isGrid: true, obstacle: '' };
 }

@@ -45,6 +45,10 @@ Why the bounds are a proof: every pair of a duty and a person falls under a boun
 
 Two things are for a reader to look at. Closed pairs (\`no room\`) and bounds below a maximum rest on Fixed seats, which the formulas count. And the formulas compare names as the spreadsheet does, without regard to capitals but with every blank: type a name in one spelling.
 
+A spreadsheet takes some texts for conditions: those that begin with =, < or >, those that hold *, ? or ~, and the words TRUE and FALSE. Where such a text is a name in the tables, formulas count faults that are none; rename it. The other way round nothing is overlooked: such a text in the place of a name is found. The check on the sheets that the pane makes to hand over counts in numbers instead of names, and takes every name for itself.
+
+Bounds that rest on times or Clash rules (their limit begins with \`the same time\` or \`a Clash rule\`) are in no column of the tables: the formulas about slots and groups count them as faults, and they are left for a reader to look at.
+
 The demo workbook has them on its sheet Proof. To use them elsewhere, give these names to the columns, without their headings:
 
 | name | column |

@@ -54,6 +54,19 @@ export function parseZone(cells: string): Zone | null {
   };
 }
 
+/** The columns of a reference such as `A:C` or `$A:$C`, from 0; null where it is none. */
+export function parseColumns(cells: string): { readonly left: number; readonly right: number } | null {
+  const match = /^\$?([A-Z]{1,3}):\$?([A-Z]{1,3})$/iu.exec(cells);
+  const [from, to] = (match?.slice(1) ?? []).map((letters) => parseCell(`${letters}1`)!.column);
+  return match === null ? null : { left: Math.min(from, to), right: Math.max(from, to) };
+}
+
+/** A rectangle, or whole columns down to the row `last` from 0; null where it is neither. */
+export function parseReference(cells: string, last: number): Zone | null {
+  const columns = parseColumns(cells);
+  return columns === null ? parseZone(cells) : { top: 0, bottom: last, ...columns };
+}
+
 /** The same written again; one cell without a colon. */
 export function formatZone({ top, left, bottom, right }: Zone): string {
   const from = `${columnLetters(left)}${top + 1}`;

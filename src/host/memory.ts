@@ -1,7 +1,8 @@
-import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, parseZone } from './address';
-import { callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft, type WorkbookPort } from './port';
-import { regionAt, regionsOf, type Zone } from './regions';
+import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, parseReference, parseZone } from './address';
+import { callsUs, firstBlankRow, type Block, type Calculation, type DraftCell, type OurCell, type SheetDraft, type WorkbookPort } from './port';
+import { regionAt, regionsOf, roomBelow, type Zone } from './regions';
 import { freeSheetName } from './sheetNames';
+import type { Range } from '../sheet/range';
 
 type Content = string | number | null | { readonly formula: string };
 
@@ -14,6 +15,8 @@ export class MemoryWorkbook implements WorkbookPort {
   readonly #selectListeners = new Set<(address: string) => void>();
   selected: string | null = null;
   recalculations = 0;
+  /** As the host would tell it. */
+  calculated: Calculation = { isManual: false, isPending: false };
 
   /** Puts a formula into a cell, or takes it away, and tells whoever listens. */
   type(address: string, formula: string | null): void {
@@ -65,7 +68,10 @@ export class MemoryWorkbook implements WorkbookPort {
 
   async blocks(): Promise<readonly Block[]> {
     const named = await Promise.all([...this.#names.keys()].map((name) => this.read(name)));
-    const regions = [...this.#sheets.keys()].flatMap((sheet) => this.#regions(sheet).map((zone) => this.#block(sheet, zone)));
+    const regions = [...this.#sheets.keys()].flatMap((sheet) => {
+      const zones = this.#regions(sheet);
+      return zones.map((zone): Block => ({ ...this.#block(sheet, zone), room: roomBelow(zone, zones, Infinity) }));
+    });
     const known = new Set(named.map((block) => block?.address));
     return [...named.filter((block) => block !== null), ...regions.filter(({ address }) => !known.has(address))];
   }
@@ -73,9 +79,10 @@ export class MemoryWorkbook implements WorkbookPort {
   read(reference: string): Promise<Block | null> {
     const address = this.#names.get(reference.toLowerCase()) ?? reference;
     const parsed = parseAddress(address);
-    const zone = parsed === null ? null : parseZone(parsed.cell);
-    if (parsed === null || zone === null || !this.#sheets.has(parsed.sheet)) return Promise.resolve(null);
-    return Promise.resolve(this.#block(parsed.sheet, zone));
+    if (parsed === null || !this.#sheets.has(parsed.sheet)) return Promise.resolve(null);
+    const rows = [...this.#sheets.get(parsed.sheet)!.keys()].map((cell) => parseCell(cell)!.row);
+    const zone = parseReference(parsed.cell, Math.max(-1, ...rows) + 1);
+    return Promise.resolve(zone === null ? null : this.#block(parsed.sheet, zone));
   }
 
   write(address: string, cells: readonly (readonly DraftCell[])[]): Promise<void> {
@@ -116,10 +123,18 @@ export class MemoryWorkbook implements WorkbookPort {
     const cells = [...this.#sheets].flatMap(([sheet, contents]) =>
       [...contents].flatMap(([cell, content]) => {
         const formula = formulaOf(content);
-        return formula !== null && callsUs(formula) ? [{ address: formatAddress({ sheet, cell }), formula, values: [[null]] }] : [];
+        return formula !== null && callsUs(formula) ? [{ address: formatAddress({ sheet, cell }), formula, value: null }] : [];
       }),
     );
     return Promise.resolve(cells);
+  }
+
+  shownBy(addresses: readonly string[]): Promise<readonly Range[]> {
+    return Promise.resolve(addresses.map(() => [[null]]));
+  }
+
+  calculation(): Promise<Calculation> {
+    return Promise.resolve(this.calculated);
   }
 
   #at(address: string): Content {

@@ -37,14 +37,18 @@ export interface WorkbookPort {
   /** Everything that may be a table: named ranges and what the sheets hold, each once. */
   blocks(): Promise<readonly Block[]>;
 
-  /** @param reference an address or a name, as in an argument of a formula; null where it is neither */
+  /**
+   * @param reference an address, whole columns of a sheet such as `Sheet!A:C` among them, or a name, as
+   *   in an argument of a formula; columns are read down to a blank row below what is filled
+   * @returns null where it is neither
+   */
   read(reference: string): Promise<Block | null>;
 
   /** Writes cells from the address on, which is the top left one. */
   write(address: string, cells: readonly (readonly DraftCell[])[]): Promise<void>;
 
   /**
-   * Puts a row into the first blank row of a range.
+   * Puts a row into the first blank row of a range. A table of Excel that is full grows by the row.
    * @returns the address of the row; null where the range is full or not there
    */
   appendRow(reference: string, cells: readonly DraftCell[]): Promise<string | null>;
@@ -58,16 +62,35 @@ export interface WorkbookPort {
 
   /** Every cell that holds one of our functions, or did before the host lost it. */
   ourCells(): Promise<readonly OurCell[]>;
+
+  /**
+   * @param addresses cells with formulas
+   * @returns for each, what it shows with all it spills over, row by row; blanks null
+   */
+  shownBy(addresses: readonly string[]): Promise<readonly Range[]>;
+
+  /** How it stands with the calculation of the workbook. */
+  calculation(): Promise<Calculation>;
+}
+
+/** Whether a workbook is calculated. */
+export interface Calculation {
+  /** True where it is calculated only when someone asks. */
+  readonly isManual: boolean;
+  /** True where something has changed that is not calculated yet; null where the host does not tell. */
+  readonly isPending: boolean | null;
 }
 
 /** A filled rectangle of cells. */
 export interface Block {
   /** As `Sheet!A1:D20`. */
   readonly address: string;
-  /** The named range or table that is exactly this; null where there is none. */
+  /** The named range or table that is exactly this, as a formula takes it; null where there is none. */
   readonly name: string | null;
   /** Row by row; blanks null. */
   readonly values: Range;
+  /** Blank rows below it that a range may go on over, so that rows added later count too; none where it is not said. */
+  readonly room?: number;
 }
 
 /** What is written into a cell. A string is always text, even one that begins with `=`. */
@@ -83,8 +106,10 @@ export interface SheetDraft {
   readonly titleRows?: readonly number[];
   /** Widths in characters, by column. */
   readonly widths?: readonly number[];
-  /** Cells such as `B9` that are drawn as an alarm while their text begins as `ALARM` does. */
+  /** Cells such as `B9`, or rectangles of them, that are drawn as an alarm while their text begins as `ALARM` does. */
   readonly alarms?: readonly string[];
+  /** Rows and columns its formulas may come to fill, for a host whose sheets are no larger than they must be. */
+  readonly room?: { readonly rows: number; readonly columns: number };
   /** Names for rectangles of this sheet, such as `{ name: 'Pairs', cells: 'A2:C40' }`. */
   readonly names?: readonly { readonly name: string; readonly cells: string }[];
   /** Columns, from 0, in which only whole numbers from `least` on may be typed, below the row `from`. */
@@ -92,14 +117,14 @@ export interface SheetDraft {
 }
 
 /** How the text of an alarm begins. */
-export const ALARM = 'Something is wrong';
+export const ALARM = 'Wrong';
 
 /** A cell with one of our functions. */
 export interface OurCell {
   readonly address: string;
   readonly formula: string;
-  /** What it shows with all it spills over, row by row; blanks null. */
-  readonly values: Range;
+  /** What the cell itself shows; null where it is blank. */
+  readonly value: unknown;
 }
 
 /** Whether a formula calls one of our functions, however the host spells it. */

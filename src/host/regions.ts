@@ -34,6 +34,21 @@ export function regionAt(zones: readonly Zone[], row: number, column: number): Z
   return zones.find(holds) ?? null;
 }
 
+/** Rows that a range may go on over below what is filled, at most. */
+const MOST_ROOM = 500;
+
+/**
+ * The blank rows below a region, up to a blank row above the next one in the same columns.
+ *
+ * @param others what is filled on the sheet; the region itself may be among it
+ * @param last the last row of the sheet, from 0
+ */
+export function roomBelow(zone: Zone, others: readonly Zone[], last: number): number {
+  const below = others.filter(({ top, left, right }) => top > zone.bottom && left <= zone.right && right >= zone.left);
+  const end = below.reduce((least, { top }) => Math.min(least, top - 2), Math.min(last, zone.bottom + MOST_ROOM));
+  return Math.max(0, end - zone.bottom);
+}
+
 /** Runs of lines that hold anything. */
 function bands(from: number, to: number, isFilled: (line: number) => boolean): [number, number][] {
   const runs: [number, number][] = [];

@@ -24,7 +24,7 @@ export abstract class CasePanel extends Panel {
     if (cases.length < 2) return nothing;
     const change = (event: Event): void => {
       this.choose((event.target as HTMLSelectElement).value);
-      void this.refresh();
+      void this.refresh(this.ours);
     };
     return html`
       <label class="dp-field">

@@ -10,6 +10,7 @@ import { parseAddress } from '../host/address';
 import type { Finding } from '../sheet/fault';
 import { joinNames } from '../sheet/write';
 import { searchView, type SearchView } from './searchModel';
+import { counted } from './words';
 
 /** What the pane shows, worked out from the calls alone. */
 export interface PaneModel {
@@ -100,11 +101,6 @@ export function spokenSummary({ cases, strays }: PaneModel): string {
   const parts = planned.length === 0 ? [] : [`${counted(uncovered, 'seat', 'seats')} uncovered`];
   if (errors > 0) parts.push(counted(errors, 'error', 'errors'));
   return `Recalculated: ${parts.join(', ')}.`;
-}
-
-/** `1 seat`, `2 seats`. */
-export function counted(number: number, one: string, many: string): string {
-  return `${number.toLocaleString('en-GB')} ${number === 1 ? one : many}`;
 }
 
 function caseView(solved: Solved, calls: readonly Call[]): CaseView {

@@ -4,10 +4,11 @@ import { NAMESPACE } from '../functions/registry';
 import { onSearch } from '../functions/searches';
 import { argumentAt } from '../desk/decide';
 import { formatAddress, formatZone, parseAddress, parseZone } from '../host/address';
-import type { WorkbookPort } from '../host/port';
+import type { OurCell, WorkbookPort } from '../host/port';
+import { freshnessOf, type Freshness } from './freshness';
 import { paneModel, spokenSummary } from './model';
 import { STYLE } from './style';
-import { paneView, type Actions } from './view';
+import { paneView, partsView, type Actions } from './view';
 import { CAUTION } from '../functions/caution';
 import { HandOverPanel } from './handOver/panel';
 import type { Panel } from './panel';
@@ -43,6 +44,7 @@ class Pane {
   readonly element = document.createElement('main');
   readonly #port: WorkbookPort;
   readonly #journal: Journal;
+  readonly #parts = document.createElement('nav');
   readonly #body = document.createElement('div');
   readonly #live = document.createElement('p');
   readonly #caution = document.createElement('p');
@@ -52,6 +54,9 @@ class Pane {
   readonly #ends: (() => void)[] = [];
   #timer: ReturnType<typeof setTimeout> | undefined;
   #refreshes = 0;
+  #ours: readonly OurCell[] = [];
+  /** Null until the host has told. */
+  #freshness: Freshness | null = null;
 
   constructor(port: WorkbookPort, journal: Journal) {
     [this.#port, this.#journal] = [port, journal];
@@ -62,7 +67,9 @@ class Pane {
     this.#caution.textContent = CAUTION;
     this.#begin = new StartPanel(port, journal);
     this.#panels = [new WhatIfPanel(port, journal), new PicturesPanel(port, journal), new HandOverPanel(port, journal), this.#begin];
-    this.element.append(this.#body, ...this.#panels.map(({ element }) => element), this.#caution, this.#live);
+    this.#parts.className = 'dp-parts';
+    this.#parts.setAttribute('aria-label', 'Parts of this pane');
+    this.element.append(this.#parts, this.#body, ...this.#panels.map(({ element }) => element), this.#caution, this.#live);
   }
 
   begin(): void {
@@ -96,8 +103,8 @@ class Pane {
         this.#draw();
       },
     };
-    render(paneView(model, this.#opened, actions), this.#body);
-    const spoken = spokenSummary(model);
+    render(paneView(model, this.#freshness, this.#opened, actions), this.#body);
+    const spoken = this.#freshness?.state === 'stale' ? this.#freshness.words : spokenSummary(model);
     if (this.#live.textContent !== spoken) this.#live.textContent = spoken;
   }
 
@@ -106,6 +113,10 @@ class Pane {
     // A busy host (Excel, while a cell is being edited) does not tell its formulas: then nothing is forgotten.
     await forgetGone(this.#port, this.#journal).catch(() => undefined);
     if (turn !== this.#refreshes) return;
+    // A host that cannot tell leaves what is known.
+    this.#ours = await this.#port.ourCells().catch(() => this.#ours);
+    this.#freshness = await freshnessOf(this.#port, this.#journal, this.#ours).catch(() => this.#freshness);
+    if (turn !== this.#refreshes) return;
     this.#draw();
     // Where nothing is answered yet, to begin is what there is to do.
     const isFirst = this.#journal.calls().length === 0;
@@ -113,9 +124,11 @@ class Pane {
     const isOnTop = this.#body.nextSibling === element;
     if (isFirst !== isOnTop) this.element.insertBefore(element, isFirst ? this.#body.nextSibling : this.#caution);
     for (const panel of this.#panels) {
-      await panel.refresh();
+      await panel.refresh(this.#ours);
       if (turn !== this.#refreshes) return;
     }
+    const parts = [{ title: 'Cases', element: this.#body }, ...this.#panels.filter(({ element: { hidden } }) => !hidden)];
+    render(partsView(parts), this.#parts);
   }
 }
 

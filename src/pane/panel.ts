@@ -2,21 +2,25 @@ import { html, render, type TemplateResult } from 'lit-html';
 import type { Journal } from '../functions/journal';
 import { Busy } from '../functions/searches';
 import type { Solved } from '../functions/solved';
-import type { WorkbookPort } from '../host/port';
+import type { OurCell, WorkbookPort } from '../host/port';
 
 /** What the focus can stand on. */
 const FOCUSABLE = 'button, input, select, summary';
 
 /** A part of the pane that draws itself, looks at the workbook and acts on it. */
 export abstract class Panel {
+  readonly title: string;
   readonly element: HTMLElement;
   protected readonly port: WorkbookPort;
   protected readonly journal: Journal;
+  /** Cells with formulas of ours, as last found. */
+  protected ours: readonly OurCell[] = [];
   /** True while an action is carried out; its buttons wait. */
   protected isBusy = false;
   #said = '';
 
   constructor(title: string, port: WorkbookPort, journal: Journal) {
+    this.title = title;
     this.port = port;
     this.journal = journal;
     this.element = document.createElement('section');
@@ -24,14 +28,18 @@ export abstract class Panel {
     this.element.setAttribute('aria-label', title);
   }
 
-  /** Looks at the workbook and draws anew; called after every recalculation. */
-  async refresh(): Promise<void> {
+  /**
+   * Looks at the workbook and draws anew; called after every recalculation.
+   * @param ours all cells with formulas of ours, as they were found just now
+   */
+  async refresh(ours: readonly OurCell[]): Promise<void> {
+    this.ours = ours;
     // A busy host (Excel, while a cell is being edited) tells nothing: what is drawn stays.
     await this.look().catch(() => undefined);
     this.draw();
   }
 
-  /** Reads what the view needs and the journal does not tell. */
+  /** Reads what the view needs and neither the journal nor `ours` tells. */
   protected look(): Promise<void> {
     return Promise.resolve();
   }
@@ -63,7 +71,7 @@ export abstract class Panel {
         this.#said = error instanceof Busy ? 'An answer is still being searched for. Press again when it is there.' : inWords(error);
       }
       this.isBusy = false;
-      await this.refresh();
+      await this.refresh(await this.port.ourCells().catch(() => this.ours));
     };
   }
 

@@ -40,6 +40,12 @@ export const STYLE = `
 .dp-pane thead th { color: var(--dp-soft); font-size: 12px; }
 .dp-item { padding: 6px 0; border-bottom: 1px solid var(--dp-line); }
 .dp-item:last-child { border-bottom: 0; }
+.dp-row { display: flex; gap: 8px; align-items: baseline; justify-content: space-between; }
+.dp-row .dp-pill { flex: none; }
+.dp-parts { position: sticky; top: 0; z-index: 1; display: flex; flex-wrap: wrap; gap: 4px; margin: -12px -12px 10px; padding: 8px 12px; background: var(--dp-ground); border-bottom: 1px solid var(--dp-line); }
+.dp-parts:empty { display: none; }
+.dp-pane .dp-parts button { min-height: 26px; padding: 1px 8px; font-size: 12.5px; }
+.dp-case, .dp-pane button, .dp-pane input, .dp-pane select, .dp-pane summary { scroll-margin-top: 80px; }
 .dp-soft { color: var(--dp-soft); font-size: 13px; }
 .dp-name { font-weight: 600; unicode-bidi: isolate; }
 .dp-clip { display: -webkit-box; -webkit-box-orient: vertical; -webkit-line-clamp: 7; overflow: hidden; }

@@ -1,6 +1,8 @@
 import { html, nothing, type TemplateResult } from 'lit-html';
 import { repeat } from 'lit-html/directives/repeat.js';
-import { counted, type CaseView, type CellError, type CellView, type FindingGroup, type PaneModel } from './model';
+import { type CaseView, type CellError, type CellView, type FindingGroup, type PaneModel } from './model';
+import { counted } from './words';
+import type { Freshness } from './freshness';
 import type { SearchView } from './searchModel';
 
 /** What the views may ask for. */
@@ -20,24 +22,37 @@ export type Opened = ReadonlySet<string>;
 const FIRST = 8;
 
 /** The whole pane. Names come from cells: they are always text, never markup. */
-export function paneView(model: PaneModel, opened: Opened, actions: Actions): TemplateResult {
+export function paneView(model: PaneModel, freshness: Freshness | null, opened: Opened, actions: Actions): TemplateResult {
   const isEmpty = model.cases.length + model.strays.length === 0;
+  const isStale = freshness?.state === 'stale';
   return html`
     <div class="dp-bar">
       <h2>Cases in this workbook</h2>
       <button type="button" @click=${actions.recalculate}>Recalculate</button>
     </div>
-    ${isEmpty ? emptyView() : nothing}
+    ${isStale || (freshness !== null && !isEmpty)
+      ? html`<p class=${isStale ? 'dp-error' : 'dp-soft'} data-state=${freshness.state}>${freshness.words}</p>`
+      : nothing}
+    ${isEmpty && !isStale ? emptyView() : nothing}
     ${repeat(model.cases, ({ id }) => id, (view) => caseView(view, opened, actions))}
     ${model.strays.length > 0 ? straysView(model.strays, actions) : nothing}
   `;
 }
 
+/** The way to the parts of the pane below the cases; the pane is long where there is much to tell. */
+export function partsView(parts: readonly { readonly title: string; readonly element: HTMLElement }[]): TemplateResult {
+  const go = (element: HTMLElement) => (): void => {
+    element.tabIndex = -1;
+    element.focus({ preventScroll: true });
+    element.scrollIntoView({ block: 'start' });
+  };
+  return html`${parts.map(({ title, element }) => html`<button type="button" @click=${go(element)}>${title}</button>`)}`;
+}
+
 function emptyView(): TemplateResult {
   return html`
     <section class="dp-case">
-      <p>Nothing has been calculated yet in this session.</p>
-      <p class="dp-soft">If the workbook holds Dutyproof formulas, press Recalculate. Otherwise begin below.</p>
+      <p>This workbook holds no formulas of Dutyproof yet. Begin below.</p>
     </section>
   `;
 }
@@ -130,7 +145,7 @@ function section<T>(
 
 function shortView({ duty, seats }: CaseView['short'][number]): TemplateResult {
   return html`
-    <li class="dp-item">
+    <li class="dp-item dp-row">
       <span class="dp-name dp-clip" dir="auto">${duty}</span>
       <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')} short</span>
     </li>
@@ -140,8 +155,10 @@ function shortView({ duty, seats }: CaseView['short'][number]): TemplateResult {
 function bottleneckView({ number, seats, reason }: CaseView['bottlenecks'][number]): TemplateResult {
   return html`
     <li class="dp-item">
-      <span class="dp-name">Bottleneck ${number}</span>
-      <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')}</span>
+      <div class="dp-row">
+        <span class="dp-name">Bottleneck ${number}</span>
+        <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')}</span>
+      </div>
       <p class="dp-soft dp-clip" dir="auto">${reason}</p>
     </li>
   `;
@@ -150,8 +167,10 @@ function bottleneckView({ number, seats, reason }: CaseView['bottlenecks'][numbe
 function fragileView({ person, seats, duties }: NonNullable<CaseView['fragile']>[number]): TemplateResult {
   return html`
     <li class="dp-item">
-      <span class="dp-name dp-clip" dir="auto">${person}</span>
-      <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')}</span>
+      <div class="dp-row">
+        <span class="dp-name dp-clip" dir="auto">${person}</span>
+        <span class="dp-pill dp-short">${counted(seats, 'seat', 'seats')}</span>
+      </div>
       <p class="dp-soft dp-clip" dir="auto">${duties}</p>
     </li>
   `;

@@ -1,7 +1,6 @@
 import { columnLetters, formatAddress } from '../host/address';
 import type { Engine, EngineModel } from '../host/workbench/engine';
 import type { WorkbenchWorkbook } from '../host/workbench/workbook';
-import { answerSheets, type Answered } from './answerSheets';
 import type { Book } from './files/book';
 import { formatTable } from './files/formats';
 import { fromEngine } from './files/fromEngine';
@@ -117,7 +116,7 @@ export class Desk {
     try {
       const renamed = shortenSheetNames(workbook.model);
       const { toFile } = formatTable(this.#opened, engine);
-      const bytes = await saveXlsx({ ...fromEngine(workbook.model, toFile), otherNames: this.#opened.otherNames ?? [] });
+      const bytes = await saveXlsx(fromEngine(workbook.model, toFile, this.#opened));
       const address = URL.createObjectURL(new Blob([bytes as BlobPart]));
       const link = document.createElement('a');
       link.href = address;
@@ -142,34 +141,21 @@ export class Desk {
     workbook.model.off('command-dispatched', this);
     workbook.replace(model);
     draw(model);
-    activateResults(model);
+    activate(model, book.active ?? 0);
     this.#isChanged = false;
     model.on('command-dispatched', this, (command) => {
       if (engine.isCoreCommand(command)) this.#isChanged = true;
-      // Sheets were made by hand or by the pane: what was offered about those opened is past.
-      if (command.type === 'CREATE_SHEET') this.#parts.notice.hide();
     });
-    this.#remark([...sentences, ...unknownFormulas(book, model)], answerSheets(book));
-  }
-
-  /** Says what is to be said of a workbook just opened, and offers to answer its tables. */
-  #remark(sentences: readonly string[], answered: Answered | null): void {
-    const { notice } = this.#parts;
-    notice.hide();
-    if (answered !== null) {
-      notice.show([...sentences, 'These look like tables of who may take what. They can be answered on new sheets; nothing in them is changed.'], [
-        { label: 'Answer these tables', run: () => this.#show(this.#name, answered.book, answered.remarks) },
-      ]);
-    } else if (sentences.length > 0) {
-      notice.show(sentences);
-    }
+    const remarks = [...sentences, ...unknownFormulas(book, model)];
+    if (remarks.length > 0) this.#parts.notice.show(remarks);
+    else this.#parts.notice.hide();
   }
 }
 
-/** A sheet of results is what people want to see first. */
-function activateResults(model: EngineModel): void {
+/** Brings the sheet into view that was in view when the file was saved. */
+function activate(model: EngineModel, sheet: number): void {
   const { getters } = model;
-  const sheetIdTo = getters.getSheetIdByName('Results');
+  const sheetIdTo = getters.getSheetIds().at(sheet);
   const sheetIdFrom = getters.getActiveSheetId();
   if (sheetIdTo !== undefined && getters.isSheetVisible(sheetIdTo) && sheetIdTo !== sheetIdFrom) {
     model.dispatch('ACTIVATE_SHEET', { sheetIdFrom, sheetIdTo });

@@ -79,8 +79,31 @@ describe('a day at the desk', () => {
     await desk.page.locator('#file-name', { hasText: 'handed.xlsx' }).waitFor();
     expect(await desk.valueAt('Handed over!B9')).toMatch(/^All is well/u);
     await desk.type("'Plan by duty'!B2", 'Cleo Marsh');
-    expect(await desk.valueAt('Handed over!B9')).toMatch(/^Something is wrong/u);
+    expect(await desk.valueAt('Handed over!B9')).toMatch(/^Wrong/u);
     expect({ foreign, errors }).toEqual({ foreign: [], errors: [] });
+    await desk.page.close();
+  });
+
+  it('takes sheets that were laid out back with one press of the undo key, and brings them again with one', async () => {
+    const desk = await DeskPage.open(site);
+    const names = () => desk.page.evaluate(() => window.dutyproof!.workbook.model.getters.getNamedRanges().map(({ name }) => name));
+    await desk.give({ 'week.csv': '\n' });
+    await desk.pane.getByRole('button', { name: 'Lay out empty tables' }).click();
+    await desk.pane.getByText('Fill the tables on Inputs').waitFor();
+    const [sheets, named] = [await desk.sheets(), await names()];
+    expect(named).toEqual(expect.arrayContaining(['Pairs', 'People', 'Duties', 'Rules']));
+    await desk.page.locator('.o-grid .o-composer').focus();
+    await desk.page.keyboard.press('Control+z');
+    await expect.poll(() => desk.sheets()).toEqual(['week']);
+    expect(await names()).toEqual([]);
+    await desk.pane.getByText('This workbook holds no formulas').waitFor();
+    await desk.page.keyboard.press('Control+y');
+    await expect.poll(() => desk.sheets()).toEqual(sheets);
+    expect(await names()).toEqual(named);
+    await paste(desk, 'Inputs!A4', PAIRS);
+    await paste(desk, 'Inputs!E4', PEOPLE);
+    await paste(desk, 'Inputs!I4', DUTIES);
+    await desk.pane.getByText('all covered').waitFor();
     await desk.page.close();
   });
 
@@ -95,8 +118,8 @@ describe('a day at the desk', () => {
     await desk.pane.getByText('Understood: 6 pairs, 3 people, 4 duties with 4 seats.').waitFor();
     await desk.pane.getByRole('button', { name: 'Put the answers on new sheets' }).click();
     await desk.pane.getByText('of 4 seats covered').waitFor();
-    await desk.pane.getByText('The answers are on Results and Why').waitFor();
-    expect(await desk.sheets()).toEqual(['who', 'staff', 'current plan', 'Results', 'Why']);
+    await desk.pane.getByText('The answers are on Results, Grid and Why').waitFor();
+    expect(await desk.sheets()).toEqual(['who', 'staff', 'current plan', 'Results', 'Grid', 'Why', 'Rules']);
 
     // A colleague drops out: the moves to the new plan.
     expect(await desk.valueAt('Why!A3')).toBe('No moves: the current plan is the best plan');
@@ -104,6 +127,17 @@ describe('a day at the desk', () => {
     await desk.pane.getByText('1 uncovered').first().waitFor();
     expect(await desk.valueAt('Why!B3')).toBe('Archive');
     expect(await desk.valueAt('Why!C3')).toBe('Cleo Marsh');
+
+    // A promise is made where there was no table for it.
+    await desk.type('staff!B4', '1');
+    const field = desk.pane.getByLabel('A duty or a person');
+    await field.fill('Archive');
+    await field.press('Enter');
+    const bo = desk.pane.locator('.dp-item', { hasText: 'Bo Vinter' });
+    await bo.getByRole('button', { name: 'What follows' }).click();
+    await bo.getByRole('button', { name: 'Fix this' }).click();
+    await desk.pane.getByText('Fixed: Bo Vinter, Archive. It stands in Rules!A4').waitFor();
+    expect(await desk.valueAt('Rules!A4')).toBe('Fixed');
     await desk.page.close();
   });
 });

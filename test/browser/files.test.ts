@@ -56,6 +56,31 @@ describe('saving', () => {
     await desk.save();
   });
 
+  it('keeps the input checks of a file, which hold on the page, and the sheet in view', async () => {
+    const check =
+      '<dataValidations count="1"><dataValidation type="whole" operator="greaterThanOrEqual" sqref="A1:A9" showErrorMessage="1">' +
+      '<formula1>0</formula1></dataValidation></dataValidations>';
+    const cell = '<row r="1"><c r="A1"><v>1</v></c></row>';
+    await desk.give({ 'checked.xlsx': xlsx({ sheets: { S: cell, T: cell }, after: check }) });
+    await desk.page.locator('#file-name', { hasText: 'checked.xlsx' }).waitFor();
+    await desk.type('S!A2', '-1');
+    await desk.notice.getByText('The value must be greater or equal to 0').waitFor();
+    await desk.page.keyboard.press('Escape');
+    expect(await desk.valueAt('S!A2')).toBeNull();
+    await desk.type('S!A2', '4');
+    expect(await desk.valueAt('S!A2')).toBe(4);
+    await desk.page.locator('.o-sheet', { hasText: 'T' }).click();
+    const { bytes } = await desk.save();
+    const { sheets, active } = await openXlsx(bytes);
+    expect(active).toBe(1);
+    expect(sheets[0].checks).toEqual([
+      { ranges: ['A1:A9'], rule: { type: 'whole', operator: 'greaterThanOrEqual', formula1: '0', showErrorMessage: true } },
+    ]);
+    await desk.give({ 'again.xlsx': bytes });
+    await desk.page.locator('#file-name', { hasText: 'again.xlsx' }).waitFor();
+    await desk.page.locator('.o-sheet.active', { hasText: 'T' }).waitFor();
+  });
+
   it('shortens a sheet name that a file cannot hold, and says so', async () => {
     await desk.page.evaluate(() => {
       const { model } = window.dutyproof!.workbook;
@@ -85,9 +110,9 @@ describe('opening', () => {
       'pairs.csv': '\uFEFFDuty;Person\r\nChoir;Ann\r\n"Organ; large";Bob\r\nOrgan, small;Ann\r\n',
       'people.csv': 'Person,Maximum\nAnn,1\nBob,1\n',
     });
-    await desk.page.getByText('Answer these tables').click();
+    await desk.pane.getByRole('button', { name: 'Put the answers on new sheets' }).click();
     await desk.pane.getByText('of 3 seats covered').waitFor();
-    expect(await desk.sheets()).toEqual(['pairs', 'people', 'Results', 'Grid']);
+    expect(await desk.sheets()).toEqual(['pairs', 'people', 'Results', 'Grid', 'Why', 'Rules']);
     expect(await desk.page.locator('#file-name').textContent()).toBe('tables.xlsx');
     expect(await desk.valueAt('pairs!A3')).toBe('Organ; large');
     expect(await desk.valueAt('Results!B5')).toBe(1);
@@ -98,6 +123,7 @@ describe('opening', () => {
   it('offers no answers for tables it does not know', async () => {
     await desk.give({ 'stock.csv': 'Item,Pieces\nChairs,12\n' });
     await desk.page.getByText('stock.xlsx').waitFor();
+    await desk.pane.getByText('No tables were found yet').waitFor();
     expect(await desk.notice.isVisible()).toBe(false);
     expect(await desk.valueAt('stock!B2')).toBe(12);
   });
@@ -114,7 +140,7 @@ describe('opening', () => {
       },
       { pairs: PAIRS, people: PEOPLE },
     );
-    await desk.page.getByText('Answer these tables').click();
+    await desk.pane.getByRole('button', { name: 'Put the answers on new sheets' }).click();
     await desk.pane.getByText('of 2 seats covered').waitFor();
   });
 
@@ -143,7 +169,7 @@ describe('what files say', () => {
       [`${markup}.csv`]: ['Duty,Person', ...hostile.map((name) => `${cell(name)},${cell(name)}`)].join('\n'),
       'people.csv': 'Person,Maximum\nNobody,1\n',
     });
-    await desk.page.getByText('Answer these tables').click();
+    await desk.pane.getByRole('button', { name: 'Put the answers on new sheets' }).click();
     await desk.pane.getByText('of 7 seats covered').waitFor();
     await desk.pane.getByText('Findings (').click();
     const [sheet] = await desk.sheets();
@@ -152,6 +178,17 @@ describe('what files say', () => {
     await desk.select(`'${sheet.replaceAll("'", "''")}'!A2`);
     await desk.page.locator('.o-sheet.active').click({ button: 'right' });
     await desk.page.keyboard.press('Escape');
+    await desk.pane.getByRole('button', { name: 'Make the sheets to hand over' }).click();
+    await desk.pane.getByText('Made 5 sheets').waitFor();
+    expect(await desk.valueAt('Handed over!B9')).toMatch(/^All is well/u);
+    const handed = await openXlsx((await desk.save()).bytes);
+    const plan = handed.sheets.find(({ name }) => name === 'Plan by duty')!.cells.filter(({ row, column }) => row > 0 && column === 0);
+    expect(plan.map(({ value }) => value).sort()).toEqual([...hostile].sort());
+    expect(plan.filter(({ formula }) => formula !== null)).toEqual([]);
+    const field = desk.pane.getByLabel('A duty or a person');
+    await field.fill(hostile[0]);
+    await field.press('Enter');
+    await desk.pane.getByText('Needs 1, held by 0').waitFor();
     expect(await desk.page.evaluate(() => 'hacked' in window)).toBe(false);
     expect(await desk.page.locator('img[src="x"]').count()).toBe(0);
     const width = await desk.pane.evaluate((element) => element.scrollWidth - element.clientWidth);

@@ -32,7 +32,7 @@ afterAll(() => site.close());
 async function open(tables: Record<string, string>): Promise<DeskPage> {
   const desk = await DeskPage.open(site);
   await desk.give(tables);
-  await desk.page.getByText('Answer these tables').click();
+  await desk.pane.getByRole('button', { name: 'Put the answers on new sheets' }).click();
   return desk;
 }
 
@@ -41,7 +41,7 @@ describe('a case that is no flow, in the workbench', () => {
     const desk = await DeskPage.open(site);
     const { foreign, errors } = watch(desk.page, site.origin);
     await desk.give(crowdedDay(30, 12, 120));
-    await desk.page.getByText('Answer these tables').click();
+    await desk.pane.getByRole('button', { name: 'Put the answers on new sheets' }).click();
     await desk.pane.getByText('of 30 seats covered').waitFor();
     await desk.page.waitForFunction(() => {
       const { getters } = window.dutyproof!.workbook.model;

@@ -86,7 +86,7 @@ describe('the workbench with the demo', () => {
       const { model } = window.dutyproof!.workbook;
       for (const name of ['Results', 'Grid', 'Why', 'Proof']) model.dispatch('DELETE_SHEET', { sheetId: model.getters.getSheetIdByName(name)!, sheetName: name });
     });
-    await desk.pane.getByText('Nothing has been calculated yet').waitFor();
+    await desk.pane.getByText('This workbook holds no formulas of Dutyproof yet').waitFor();
   });
 
   it('jumps to the cell that a button of the pane names', async () => {

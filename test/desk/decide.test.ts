@@ -34,8 +34,10 @@ describe('decisions in the rules', () => {
     expect((await port.read('Rules!A3:E3'))!.values).toEqual([['Bo', 'Fixed', null, '=Late desk', null]]);
     const decisions = await decisionsOf(port, 'Results!A1');
     expect(decisions.map(({ word, duty, person }) => [word, duty, person])).toEqual([['Barred', 'Desk', 'Ada'], ['Fixed', '=Late desk', 'Bo']]);
-    await undecide(port, decisions[1]);
-    expect(await decisionsOf(port, 'Results!A1')).toHaveLength(1);
+    expect(await undecide(port, 'Results!A1', decisions[0])).toBe('Taken away: Barred, Ada, Desk.');
+    expect((await port.read('Rules!A2:E2'))!.values).toEqual([[null, null, 'family', null, null]]);
+    await undecide(port, 'Results!A1', decisions[1]);
+    expect(await decisionsOf(port, 'Results!A1')).toHaveLength(0);
   });
 
   it('say what is missing where they cannot be written', async () => {
@@ -43,5 +45,19 @@ describe('decisions in the rules', () => {
     expect(await decide(port, 'Results!A2', 'Fixed', 'Desk', 'Bo')).toContain('fourth argument');
     for (let i = 0; i < 3; i++) await decide(port, 'Results!A1', 'Fixed', `Desk ${i}`, 'Bo');
     expect(await decide(port, 'Results!A1', 'Fixed', 'Desk', 'Bo')).toContain('no blank row left');
+  });
+
+  it('are not taken away from where something else stands by now', async () => {
+    const [decision] = await decisionsOf(port, 'Results!A1');
+    await port.write('Rules!A2', [['Bo']]);
+    expect(await undecide(port, 'Results!A1', decision)).toContain('no longer holds this decision');
+    expect((await port.read('Rules!A2:D2'))!.values).toEqual([['Bo', 'Barred', 'family', 'Desk']]);
+  });
+
+  it.each(['A1:E5', '$A$1:$E$5', 'Rules!A1:E5', 'Rules!$A$1:$E$5', 'Rules'])('are found where a formula on the sheet of the rules names them %s', async (rules) => {
+    await port.write('Rules!H1', [[{ formula: `=DUTY.ASSIGN(Pairs, People, Duties, ${rules})` }]]);
+    expect(await argumentAt(port, 'Rules!H1', 3)).not.toBeNull();
+    expect(await decisionsOf(port, 'Rules!H1')).toHaveLength(1);
+    expect(await decide(port, 'Rules!H1', 'Fixed', 'Desk', 'Bo')).toContain('It stands in Rules!A3');
   });
 });

@@ -91,6 +91,34 @@ describe('the native formulas', () => {
     );
   });
 
+  it('are not deceived by signs of a condition or pattern in the place of a name', () => {
+    let tried = 0;
+    fc.assert(
+      fc.property(specs(), fc.constantFrom('*', '?*', '<>', '>A', '=', '~', 'own*'), fc.constantFrom(1, 2), fc.nat(), (spec, sign, column, which) => {
+        const own = plain(spec);
+        const copy = proofOf(own);
+        const seats = copy.filter(([part]) => part === 'Seat');
+        if (seats.length === 0) return;
+        const row = seats[which % seats.length];
+        row[column] = sign.replace('own', String(row[column]).slice(0, -1));
+        tried++;
+        expect(failing(own, copy)).not.toEqual([]);
+      }),
+      { numRuns: 150 },
+    );
+    expect(tried).toBeGreaterThan(80);
+  });
+
+  it('find faults that are none where a name of the tables is such a sign, as the document says', () => {
+    const odd: Table[] = [
+      [['Duty', 'Person'], ['Choir', '>5']],
+      [['Person', 'Maximum'], ['>5', 1]],
+      [['Duty', 'Need', 'Slot', 'Group'], ['Choir', 1, '', '']],
+      [['Rule', 'Duty', 'Person', 'Value']],
+    ];
+    expect(failing(odd, proofOf(odd))).not.toEqual([]);
+  });
+
   const tables: Table[] = [
     [['Duty', 'Person'], ['Choir', 'Ann'], ['Choir', 'Bob'], ['Organ', 'Ann'], ['Bells', 'Ann'], ['Bells', 'Cat'], ['Door', 'Cat'], ['Tea', 'Dan'], ['Tea', 'Ann']],
     [['Person', 'Maximum'], ['Ann', 2], ['Bob', 1], ['Cat', 1], ['Dan', 1]],

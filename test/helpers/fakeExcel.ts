@@ -8,7 +8,11 @@ import { regionAt, regionsOf, type Zone } from '../../src/host/regions';
  */
 export class FakeExcel {
   readonly sheets = new Map<string, Map<string, string | number>>();
-  readonly names = new Map<string, { sheet: string; zone: Zone }>();
+  /** By name in small letters; null where the cells are gone. */
+  readonly names = new Map<string, { sheet: string; zone: Zone } | null>();
+  /** Tables by name, headings included. */
+  readonly tables = new Map<string, { sheet: string; zone: Zone }>();
+  calculation = { calculationMode: 'Automatic', calculationState: 'Done' };
   selected = { sheet: 'Sheet1', zone: parseZone('A1')! };
   readonly changed = new Set<() => unknown>();
   readonly selectionChanged = new Set<() => unknown>();
@@ -28,6 +32,9 @@ export class FakeExcel {
           return result;
         },
         CalculationType: { full: 'Full' },
+        CalculationMode: { manual: 'Manual' },
+        CalculationState: { pending: 'Pending' },
+        SpecialCellType: { formulas: 'Formulas' },
         ConditionalFormatType: { containsText: 'ContainsText' },
         ConditionalTextOperator: { beginsWith: 'BeginsWith' },
       },
@@ -119,7 +126,7 @@ class FakeWorkbook {
   readonly worksheets: FakeSheets;
   readonly names: Loadable;
   readonly tables: Loadable;
-  readonly application = { calculate: () => this.#excel.changed.forEach((listener) => void listener()) };
+  readonly application;
   readonly onSelectionChanged;
   readonly #context: FakeContext;
   readonly #excel: FakeExcel;
@@ -129,18 +136,29 @@ class FakeWorkbook {
     this.#excel = context.excel;
     const { names } = context.excel;
     this.worksheets = new FakeSheets(context);
+    this.application = Object.assign(new Loadable(context, () => ({ ...context.excel.calculation })), {
+      calculate: () => this.#excel.changed.forEach((listener) => void listener()),
+    });
     const item = (name: string): object => {
       const found = names.get(name.toLowerCase());
-      const range = found === undefined ? null : new FakeRange(context, found.sheet, found.zone);
-      const loadable = new Loadable(context, () => ({ name, type: 'Range', ...nullable(found === undefined) }));
-      return Object.assign(loadable.load('name, type, isNullObject'), { getRange: () => range!, getRangeOrNullObject: () => range! });
+      const range = found === undefined || found === null ? null : new FakeRange(context, found.sheet, found.zone);
+      const loadable = new Loadable(context, () => ({ name, type: found === null ? 'Error' : 'Range', ...nullable(found === undefined) }));
+      return Object.assign(loadable.load('name, type, isNullObject'), {
+        getRange: () => range!,
+        getRangeOrNullObject: () => range!,
+        delete: () => names.delete(name.toLowerCase()),
+      });
     };
     this.names = Object.assign(new Loadable(context, () => ({ items: [...names.keys()].map((name) => ready(item(name))) })), {
       getItemOrNullObject: item,
-      add: (name: string, range: FakeRange) => names.set(name.toLowerCase(), { sheet: range.sheet, zone: range.zone }),
+      add: (name: string, range: FakeRange) => {
+        if (names.has(name.toLowerCase())) throw new Error(`ItemAlreadyExists: ${name}`);
+        names.set(name.toLowerCase(), { sheet: range.sheet, zone: range.zone });
+      },
     });
-    this.tables = Object.assign(new Loadable(context, () => ({ items: [] })), {
-      getItemOrNullObject: () => new Loadable(context, () => nullable(true)),
+    const table = (name: string): FakeTable => new FakeTable(context, name);
+    this.tables = Object.assign(new Loadable(context, () => ({ items: [...context.excel.tables.keys()].map((name) => ready(table(name).load('name'))) })), {
+      getItemOrNullObject: table,
     });
     this.onSelectionChanged = event(context, this.#excel.selectionChanged);
   }
@@ -152,6 +170,31 @@ class FakeWorkbook {
   getActiveCell(): FakeRange {
     const { sheet, zone } = this.#excel.selected;
     return new FakeRange(this.#context, sheet, { ...zone, bottom: zone.top, right: zone.left });
+  }
+}
+
+class FakeTable extends Loadable {
+  readonly rows = { add: () => this.#grow() };
+  readonly #name: string;
+
+  constructor(context: FakeContext, name: string) {
+    super(context, () => ({ name, ...nullable(!context.excel.tables.has(name)) }));
+    this.#name = name;
+  }
+
+  getRange(): FakeRange {
+    const { sheet, zone } = this.context.excel.tables.get(this.#name)!;
+    return new FakeRange(this.context, sheet, zone);
+  }
+
+  getDataBodyRange(): FakeRange {
+    const { sheet, zone } = this.context.excel.tables.get(this.#name)!;
+    return new FakeRange(this.context, sheet, { ...zone, top: zone.top + 1 });
+  }
+
+  #grow(): void {
+    const { sheet, zone } = this.context.excel.tables.get(this.#name)!;
+    this.context.excel.tables.set(this.#name, { sheet, zone: { ...zone, bottom: zone.bottom + 1 } });
   }
 }
 
@@ -205,12 +248,24 @@ class FakeSheet extends Loadable {
     this.#name = name;
   }
 
-  getRange(cells: string): FakeRange {
-    return new FakeRange(this.context, this.#name, parseZone(cells)!);
+  /** Without cells: the whole sheet, of which only the formulas are ever asked for. */
+  getRange(cells?: string): FakeRange | { getSpecialCellsOrNullObject: (kind: string) => Loadable } {
+    if (cells !== undefined) return new FakeRange(this.context, this.#name, parseZone(cells)!);
+    return { getSpecialCellsOrNullObject: (kind) => this.#formulas(kind) };
   }
 
-  getCell(row: number, column: number): FakeRange {
-    return this.getRangeByIndexes(row, column, 1, 1);
+  #formulas(kind: string): Loadable {
+    if (kind !== 'Formulas') throw new Error(`InvalidArgument: ${kind}`);
+    const { excel } = this.context;
+    const used = excel.used(this.#name);
+    const cells: FakeRange[] = [];
+    for (let row = used?.top ?? 1; row <= (used?.bottom ?? 0); row++) {
+      for (let column = used!.left; column <= used!.right; column++) {
+        if (String(excel.at(this.#name, row, column)).startsWith('=')) cells.push(this.getRangeByIndexes(row, column, 1, 1));
+      }
+    }
+    const areas = new Loadable(this.context, () => ({ items: cells }));
+    return Object.assign(new Loadable(this.context, () => nullable(cells.length === 0)), { areas });
   }
 
   getRangeByIndexes(row: number, column: number, rows: number, columns: number): FakeRange {
@@ -242,6 +297,8 @@ class FakeRange extends Loadable {
       );
     super(context, () => ({
       address: formatAddress({ sheet, cell: formatZone(zone) }),
+      rowIndex: zone.top,
+      rowCount: zone.bottom - zone.top + 1,
       cellCount: (zone.bottom - zone.top + 1) * (zone.right - zone.left + 1),
       // A formula is calculated by nobody here; an apostrophe before a text is not part of it.
       values: grid((content) => (typeof content !== 'string' ? content : content.startsWith('=') ? '' : content.replace(/^'/u, ''))),
@@ -267,6 +324,10 @@ class FakeRange extends Loadable {
   getCell(row: number, column: number): FakeRange {
     const [top, left] = [this.zone.top + row, this.zone.left + column];
     return new FakeRange(this.context, this.sheet, { top, left, bottom: top, right: left });
+  }
+
+  getLastRow(): FakeRange {
+    return new FakeRange(this.context, this.sheet, { ...this.zone, top: this.zone.bottom });
   }
 
   getResizedRange(rows: number, columns: number): FakeRange {

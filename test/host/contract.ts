@@ -79,6 +79,16 @@ export function describeWorkbookPort(name: string, makeHarness: () => Harness): 
       expect((await port.read(`${sheet}!A1:A3`))!.values).toEqual([['Rule'], ['+1'], [2]]);
     });
 
+    it('reads whole columns down to a blank row below what is filled, and puts rows there', async () => {
+      const { port } = makeHarness();
+      const [sheet] = await port.addSheets([{ name: 'Columns', rows: [['Rule', 'Duty'], ['Fixed', 'Choir']] }]);
+      const block = (await port.read(`${sheet}!$A:$B`))!;
+      expect(block.address).toBe(`${sheet}!A1:B3`);
+      expect(block.values).toEqual([['Rule', 'Duty'], ['Fixed', 'Choir'], [null, null]]);
+      expect(await port.appendRow(`${sheet}!A:B`, ['Barred'])).toBe(`${sheet}!A3`);
+      expect(await port.appendRow(`${sheet}!A:B`, ['Barred'])).toBe(`${sheet}!A4`);
+    });
+
     it('writes cells, formulas among them, and finds those that are ours', async () => {
       const { port } = makeHarness();
       const [sheet] = await port.addSheets([{ name: 'Ours', rows: [['x']] }]);
@@ -86,6 +96,8 @@ export function describeWorkbookPort(name: string, makeHarness: () => Harness): 
       const ours = (await port.ourCells()).filter(({ address }) => address.startsWith(`${sheet}!`));
       expect(ours.map(({ address }) => address)).toEqual([`${sheet}!C2`]);
       expect(ours[0].formula.replaceAll(' ', '')).toBe('=DUTY.FINDINGS(A1:B2,3)');
+      expect(await port.shownBy([`${sheet}!C2`])).toHaveLength(1);
+      expect(await port.calculation()).toEqual({ isManual: false, isPending: false });
       await port.write(`${sheet}!C2`, [[null]]);
       expect((await port.ourCells()).filter(({ address }) => address.startsWith(`${sheet}!`))).toEqual([]);
     });

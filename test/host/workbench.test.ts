@@ -158,4 +158,57 @@ describe('the workbook port of the workbench', () => {
     expect(model.getters.getActivePosition()).toEqual({ sheetId, col: 1, row: 1 });
     expect(model.getters.isSheetVisible(sheetId)).toBe(true);
   });
+
+  it('takes sheets back in one step of undo, with their names, and brings them again in one', async () => {
+    const port = new WorkbenchWorkbook(model, engine);
+    const before = await port.sheetNames();
+    const draft = { rows: [['Duty', 'Need'], ['Choir', 2]], headingRows: [0], titleRows: [0], widths: [20, 8], alarms: ['A1:A2'] };
+    await port.addSheets([
+      { ...draft, name: 'One', names: [{ name: 'First', cells: 'A1:B2' }], wholes: [{ column: 1, from: 1, least: 0 }] },
+      { ...draft, name: 'Two', names: [{ name: 'Second', cells: 'A1:B2' }], rows: [[{ formula: '=ROWS(First)' }]], headingRows: [] },
+    ]);
+    const after = await port.sheetNames();
+    model.dispatch('REQUEST_UNDO');
+    expect(await port.sheetNames()).toEqual(before);
+    expect(await port.read('First')).toBeNull();
+    model.dispatch('REQUEST_REDO');
+    expect(await port.sheetNames()).toEqual(after);
+    expect((await port.read('Two!A1'))!.values).toEqual([[2]]);
+    expect((await port.read('Second'))!.address).toBe('Two!A1:B2');
+  });
+});
+
+describe('sheets that are added', () => {
+  const drafts = [
+    { name: 'Table', rows: [['Duty', 'Need'], ['Choir', 2]], names: [{ name: 'Needs', cells: 'A1:B9' }], widths: [20, 8], headingRows: [0] },
+    { name: 'Answer', rows: [['At a glance'], [{ formula: '=SUM(Needs)' }]], titleRows: [0], alarms: ['A2'] },
+    { name: 'Counts', rows: [['Count'], [1]], wholes: [{ column: 0, from: 1, least: 0 }] },
+  ];
+  /** All there is to a workbook, but for the ids of styles. */
+  const whole = () => {
+    const { sheets, namedRanges } = model.exportData();
+    return { sheets, namedRanges };
+  };
+
+  it('go with one step of undo, and come with one of redo: cells, names, widths, alarms and checks', async () => {
+    const workbook = new WorkbenchWorkbook(model, engine);
+    type('A1', 'before');
+    const before = whole();
+    await workbook.addSheets(drafts);
+    const after = whole();
+    expect(after.sheets.map(({ name }) => name)).toEqual(['S', "O'Neil", 'Table', 'Answer', 'Counts']);
+    expect(at('A2', 'Answer').value).toBe(2);
+    expect(after.sheets[4].dataValidationRules).toHaveLength(1);
+    expect(after.sheets[3].conditionalFormats).toHaveLength(1);
+    for (let time = 0; time < 3; time++) {
+      model.dispatch('REQUEST_UNDO');
+      expect(whole()).toEqual(before);
+      model.dispatch('REQUEST_REDO');
+      expect(whole()).toEqual(after);
+      expect(at('A2', 'Answer').value).toBe(2);
+    }
+    model.dispatch('REQUEST_UNDO');
+    model.dispatch('REQUEST_UNDO');
+    expect(at('A1').value).toBe(null);
+  });
 });

@@ -1,20 +1,16 @@
 import { formatAddress, formatZone, parseAddress, parseZone } from '../address';
-import { ALARM, callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft } from '../port';
-import { regionsOf } from '../regions';
+import { ALARM, firstBlankRow, type Block, type DraftCell, type SheetDraft } from '../port';
+import { regionsOf, roomBelow } from '../regions';
 import { freeSheetName } from '../sheetNames';
+import { find, WITH_HEADINGS } from './find';
 
 const HEADING = { fill: '#e3efe9' };
 const TITLE = { size: 14, colour: '#1f5a4c' };
 /** Points a character takes, about. */
 const CHARACTER = 6;
 
-/** The formula of a cell, or null. A text that begins with `=` is told as its own formula; no formula shows itself. */
-export function formulaIn(content: unknown, value: unknown): string | null {
-  return typeof content === 'string' && content.startsWith('=') && content !== value ? content : null;
-}
-
 /** Blank cells come as ''. */
-function toValues(values: readonly (readonly unknown[])[]): unknown[][] {
+export function toValues(values: readonly (readonly unknown[])[]): unknown[][] {
   return values.map((row) => row.map((cell) => (cell === '' ? null : cell)));
 }
 
@@ -27,8 +23,13 @@ function toFormula(cell: DraftCell): string | number {
 }
 
 function blockOf(range: Excel.Range, name: string | null): Block {
+  return { address: blockAddress(range), name, values: toValues(range.values) };
+}
+
+/** The address of a range as formulas write it. */
+function blockAddress(range: Excel.Range): string {
   const { sheet, cell } = parseAddress(range.address)!;
-  return { address: formatAddress({ sheet, cell }), name, values: toValues(range.values) };
+  return formatAddress({ sheet, cell });
 }
 
 /** Reads and writes the tables of a workbook in Excel. */
@@ -63,7 +64,8 @@ export class ExcelTables {
       await context.sync();
       const ranges = [
         ...names.items.filter(({ type }) => type === 'Range').map((item) => ({ name: item.name, range: item.getRangeOrNullObject() })),
-        ...tables.items.map((table) => ({ name: table.name, range: table.getRange() })),
+        // By its plain name a formula takes a table without its headings.
+        ...tables.items.map((table) => ({ name: `${table.name}${WITH_HEADINGS}`, range: table.getRange() })),
       ];
       for (const { range } of ranges) range.load('address, values');
       const used = worksheets.items.map((sheet) => sheet.getUsedRangeOrNullObject(true).load('address, values'));
@@ -77,7 +79,7 @@ export class ExcelTables {
 
   async read(reference: string): Promise<Block | null> {
     return Excel.run(async (context) => {
-      const { range, name } = await this.#find(context, reference);
+      const { range, name } = await find(context, reference);
       if (range === null) return null;
       range.load('address, values');
       await context.sync();
@@ -97,16 +99,17 @@ export class ExcelTables {
 
   async appendRow(reference: string, cells: readonly DraftCell[]): Promise<string | null> {
     return Excel.run(async (context) => {
-      const { range } = await this.#find(context, reference);
+      const { range, table } = await find(context, reference);
       if (range === null) return null;
       range.load('values');
       await context.sync();
       const at = firstBlankRow(toValues(range.values));
-      if (at === -1) return null;
-      const start = range.getCell(at, 0).load('address');
+      if (at === -1 && table === null) return null;
+      if (at === -1) table!.rows.add();
+      const start = (at === -1 ? table!.getRange().getLastRow().getCell(0, 0) : range.getCell(at, 0)).load('address');
       fill(start, [cells]);
       await context.sync();
-      return start.address;
+      return blockAddress(start);
     });
   }
 
@@ -114,9 +117,13 @@ export class ExcelTables {
     const taken = new Set((await this.sheetNames()).map((name) => name.toLowerCase()));
     return Excel.run(async (context) => {
       const { worksheets, names } = context.workbook;
-      names.load('items/name');
+      names.load('items/name, items/type');
       await context.sync();
-      const known = new Set(names.items.map(({ name }) => name.toLowerCase()));
+      // A name whose cells are gone (#REF!) stands in the way of nothing.
+      const wanted = new Set(drafts.flatMap((draft) => (draft.names ?? []).map(({ name }) => name.toLowerCase())));
+      const isDead = ({ name, type }: Excel.NamedItem): boolean => type === 'Error' && wanted.has(name.toLowerCase());
+      const known = new Set(names.items.filter((item) => !isDead(item)).map(({ name }) => name.toLowerCase()));
+      for (const item of names.items.filter(isDead)) item.delete();
       const made = drafts.map((draft) => ({ draft, sheet: worksheets.add(freeSheetName(draft.name, taken)).load('name') }));
       for (const { draft, sheet } of made) {
         for (const { name, cells } of draft.names ?? []) if (!known.has(name.toLowerCase())) names.add(name, sheet.getRange(cells));
@@ -129,62 +136,21 @@ export class ExcelTables {
       return made.map(({ sheet }) => sheet.name);
     });
   }
-
-  async ourCells(): Promise<OurCell[]> {
-    return Excel.run(async (context) => {
-      const { worksheets } = context.workbook;
-      worksheets.load('items/name');
-      await context.sync();
-      const used = worksheets.items.map((sheet) => ({ sheet, range: sheet.getUsedRangeOrNullObject().load('address, formulas, values') }));
-      await context.sync();
-      const found = used.filter(({ range }) => !range.isNullObject).flatMap(({ sheet, range }) => {
-        const zone = parseZone(parseAddress(range.address)!.cell)!;
-        return (range.formulas as unknown[][]).flatMap((row, r) =>
-          row.flatMap((content, c) => {
-            const formula = formulaIn(content, range.values[r][c]);
-            return formula !== null && callsUs(formula) ? [{ formula, cell: sheet.getCell(zone.top + r, zone.left + c) }] : [];
-          }),
-        );
-      });
-      const spills = Office.context.requirements.isSetSupported('ExcelApi', '1.12');
-      const loaded = found.map(({ formula, cell }) => ({
-        formula,
-        cell: cell.load('address, values'),
-        spill: spills ? cell.getSpillingToRangeOrNullObject().load('values') : null,
-      }));
-      await context.sync();
-      return loaded.map(({ formula, cell, spill }) => ({
-        address: blockOf(cell, null).address,
-        formula,
-        values: toValues(spill === null || spill.isNullObject ? cell.values : spill.values),
-      }));
-    });
-  }
-
-  async #find(context: Excel.RequestContext, reference: string): Promise<{ range: Excel.Range | null; name: string | null }> {
-    const { names, tables, worksheets } = context.workbook;
-    const parsed = parseAddress(reference.trim());
-    if (parsed !== null) {
-      const sheet = worksheets.getItemOrNullObject(parsed.sheet).load('isNullObject');
-      await context.sync();
-      return { range: sheet.isNullObject || parseZone(parsed.cell) === null ? null : sheet.getRange(parsed.cell), name: null };
-    }
-    const item = names.getItemOrNullObject(reference.trim()).load('isNullObject, type');
-    const table = tables.getItemOrNullObject(reference.trim()).load('isNullObject');
-    await context.sync();
-    if (!table.isNullObject) return { range: table.getRange(), name: reference.trim() };
-    return { range: item.isNullObject || item.type !== 'Range' ? null : item.getRange(), name: reference.trim() };
-  }
 }
+
+/** The last row of a sheet, from 0. */
+const LAST_ROW = 1_048_575;
 
 /** The filled regions of a used range. */
 function regionBlocks({ address, values }: Block): Block[] {
   const { sheet, cell } = parseAddress(address)!;
   const { top, left } = parseZone(cell)!;
-  return regionsOf(values.length, values[0]?.length ?? 0, (row, column) => values[row][column] !== null).map((zone) => {
+  const zones = regionsOf(values.length, values[0]?.length ?? 0, (row, column) => values[row][column] !== null);
+  return zones.map((zone) => {
     const moved = { top: zone.top + top, bottom: zone.bottom + top, left: zone.left + left, right: zone.right + left };
     const rows = values.slice(zone.top, zone.bottom + 1).map((row) => row.slice(zone.left, zone.right + 1));
-    return { address: formatAddress({ sheet, cell: formatZone(moved) }), name: null, values: rows };
+    const room = roomBelow(zone, zones, LAST_ROW - top);
+    return { address: formatAddress({ sheet, cell: formatZone(moved) }), name: null, values: rows, room };
   });
 }
 

@@ -1,6 +1,8 @@
 import { parseAddress } from '../address';
-import type { Block, DraftCell, OurCell, SheetDraft, WorkbookPort } from '../port';
-import { ExcelTables, formulaIn } from './tables';
+import type { Range } from '../../sheet/range';
+import type { Block, Calculation, DraftCell, OurCell, SheetDraft, WorkbookPort } from '../port';
+import { formulaIn, ourCells, shownBy } from './ours';
+import { ExcelTables } from './tables';
 
 /** The pane's view of a workbook in Excel. Asks only for what the Excel at hand supports. */
 export class ExcelWorkbook implements WorkbookPort {
@@ -131,7 +133,21 @@ export class ExcelWorkbook implements WorkbookPort {
   }
 
   ourCells(): Promise<readonly OurCell[]> {
-    return this.#tables.ourCells();
+    return ourCells();
+  }
+
+  shownBy(addresses: readonly string[]): Promise<readonly Range[]> {
+    return shownBy(addresses);
+  }
+
+  async calculation(): Promise<Calculation> {
+    return Excel.run(async (context) => {
+      const knowsState = supports('1.9');
+      const application = context.workbook.application.load(knowsState ? 'calculationMode, calculationState' : 'calculationMode');
+      await context.sync();
+      const isManual = application.calculationMode === Excel.CalculationMode.manual;
+      return { isManual, isPending: knowsState ? application.calculationState === Excel.CalculationState.pending : null };
+    });
   }
 }
 

@@ -1,11 +1,5 @@
 import type { Engine, EngineModel } from './engine';
 
-/** A command of the engine with what it takes. */
-export interface BulkStep {
-  readonly command: string;
-  readonly payload: object;
-}
-
 const BULK = 'DUTYPROOF_BULK';
 
 /**
@@ -14,15 +8,15 @@ const BULK = 'DUTYPROOF_BULK';
  */
 export function registerBulk({ UIPlugin, registries: { featurePluginRegistry } }: Engine): void {
   class Bulk extends UIPlugin {
-    handle(command: { readonly type: string; readonly steps?: readonly BulkStep[] }): void {
-      if (command.type !== BULK) return;
-      for (const { command: name, payload } of command.steps ?? []) this.dispatch(name, payload);
+    handle(command: { readonly type: string; readonly run?: () => void }): void {
+      // What is dispatched while a command is under way belongs to it.
+      if (command.type === BULK) command.run?.();
     }
   }
   featurePluginRegistry.replace('dutyproof_bulk', Bulk);
 }
 
-/** Carries commands out as one. */
-export function runBulk(model: EngineModel, steps: readonly BulkStep[]): void {
-  model.dispatch(BULK, { steps });
+/** Carries out as one whatever the function dispatches. */
+export function runBulk(model: EngineModel, run: () => void): void {
+  model.dispatch(BULK, { run });
 }

@@ -4,7 +4,8 @@
  * published; this is all that our code knows of it.
  */
 
-import type { EngineAlarm } from './alarms';
+import type { EngineCondition } from './alarms';
+import type { EngineCheck } from './checks';
 
 /** A cell as functions get and give it. */
 export interface EngineCell {
@@ -154,7 +155,8 @@ export interface EngineSheet {
   readonly cols: Readonly<Record<string, EngineHeader>>;
   readonly rows: Readonly<Record<string, EngineHeader>>;
   readonly merges: readonly string[];
-  readonly conditionalFormats?: readonly EngineAlarm[];
+  readonly conditionalFormats?: readonly EngineCondition[];
+  readonly dataValidationRules?: readonly EngineCheck[];
   readonly isVisible: boolean;
   readonly areGridLinesVisible?: boolean;
   readonly color?: string;
@@ -188,12 +190,17 @@ export interface EngineStyle {
   readonly align?: 'left' | 'center' | 'right';
   readonly verticalAlign?: 'top' | 'middle' | 'bottom';
   readonly wrapping?: 'overflow' | 'wrap' | 'clip';
+  /** Of slanted text, in radians; negative where it climbs. */
+  readonly rotation?: number;
+  /** What the engine keeps without looking at it. */
+  readonly unseen?: object;
 }
 
 /** The engine as its file defines it. */
 export interface Engine {
   readonly Model: new (data: object, config?: object) => EngineModel;
   readonly Spreadsheet: unknown;
+  readonly CompiledFormula: { IsBadExpression(formula: string): boolean };
   /** What a part of the engine is made from that handles commands. */
   readonly UIPlugin: new (...args: never[]) => { dispatch(command: string, payload: object): unknown };
   readonly registries: {

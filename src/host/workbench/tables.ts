@@ -1,17 +1,17 @@
-import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, parseZone } from '../address';
+import { columnLetters, formatAddress, formatZone, parseAddress, parseCell, parseReference, parseZone } from '../address';
 import { callsUs, firstBlankRow, type Block, type DraftCell, type OurCell, type SheetDraft } from '../port';
-import { regionAt, regionsOf, type Zone } from '../regions';
+import { regionAt, regionsOf, roomBelow, type Zone } from '../regions';
 import { freeSheetName } from '../sheetNames';
+import type { Range } from '../../sheet/range';
 import type { Engine, EngineModel, EngineZone } from './engine';
 import { literal } from './literal';
-import { alarmStep } from './alarms';
+import { addAlarm } from './alarms';
 import { runBulk } from './bulk';
+import { addWholes } from './checks';
+import { widthInPixels } from './widths';
 
 const HEADING = { bold: true, fillColor: '#e3efe9' };
 const TITLE = { bold: true, fontSize: 14, textColor: '#1f5a4c' };
-/** Pixels a character takes, about, and beside the text. */
-const CHARACTER = 7;
-const MARGIN = 12;
 /** Rows and columns of a new sheet beyond what is written, for spills. */
 const SPARE_ROWS = 400;
 const SPARE_COLUMNS = 20;
@@ -39,7 +39,12 @@ export class EngineTables {
     const { getters } = this.#model;
     const named = getters.getNamedRanges().map(({ range }) => this.#block(range.sheetId, range.zone));
     const known = new Set(named.map(({ address }) => address));
-    const regions = getters.getSheetIds().flatMap((sheetId) => this.#regions(sheetId).map((zone) => this.#block(sheetId, zone)));
+    const regions = getters.getSheetIds().flatMap((sheetId) => {
+      const zones = this.#regions(sheetId);
+      const filled = [...zones, ...this.#spills(sheetId)];
+      const last = getters.getNumberRows(sheetId) - 1;
+      return zones.map((zone): Block => ({ ...this.#block(sheetId, zone), room: roomBelow(zone, filled, last) }));
+    });
     return [...named, ...regions.filter(({ address }) => !known.has(address))];
   }
 
@@ -48,9 +53,12 @@ export class EngineTables {
     const named = getters.getNamedRanges().find(({ name }) => name.toLowerCase() === reference.trim().toLowerCase());
     if (named !== undefined) return this.#block(named.range.sheetId, named.range.zone);
     const parsed = parseAddress(reference.trim());
-    const zone = parsed === null ? null : parseZone(parsed.cell);
     const sheetId = parsed === null ? undefined : getters.getSheetIdByName(parsed.sheet);
-    return zone === null || sheetId === undefined ? null : this.#block(sheetId, zone);
+    if (parsed === null || sheetId === undefined) return null;
+    const rows = getters.getCells(sheetId).map(({ id }) => getters.getCellPosition(id).row);
+    const last = Math.min(rows.reduce((a, b) => Math.max(a, b), -1) + 1, getters.getNumberRows(sheetId) - 1);
+    const zone = parseReference(parsed.cell, last);
+    return zone === null ? null : this.#block(sheetId, zone);
   }
 
   write(address: string, cells: readonly (readonly DraftCell[])[]): void {
@@ -74,21 +82,12 @@ export class EngineTables {
   addSheets(drafts: readonly SheetDraft[]): string[] {
     const { getters } = this.#model;
     const taken = new Set(getters.getSheetIds().map((id) => getters.getSheetName(id).toLowerCase()));
-    // Names first: a formula on one sheet may use what another holds.
     const made = drafts.map((draft) => ({ draft, name: freeSheetName(draft.name, taken), sheetId: crypto.randomUUID() }));
-    for (const { draft, name, sheetId } of made) {
-      const columns = Math.max(0, ...draft.rows.map((row) => row.length)) + SPARE_COLUMNS;
-      const position = getters.getSheetIds().length;
-      this.#model.dispatch('CREATE_SHEET', { sheetId, name, position });
-      this.#enlarge(sheetId, draft.rows.length + SPARE_ROWS, columns);
-      for (const { name: own, cells } of draft.names ?? []) {
-        const range = getters.getRangeDataFromZone(sheetId, parseZone(cells)!);
-        // Without the sheet the engine measures the range against the sheet in view.
-        this.#model.dispatch('CREATE_NAMED_RANGE', { sheetId, name: own, ranges: [range] });
-      }
-      this.#dress(sheetId, draft);
-    }
-    for (const { draft, sheetId } of made) this.#put(sheetId, 0, 0, draft.rows, true);
+    runBulk(this.#model, () => {
+      // Names first: a formula on one sheet may use what another holds.
+      for (const { draft, name, sheetId } of made) this.#makeSheet(sheetId, name, draft);
+      for (const { draft, sheetId } of made) this.#put(sheetId, 0, 0, draft.rows, true);
+    });
     return made.map(({ name }) => name);
   }
 
@@ -99,12 +98,36 @@ export class EngineTables {
         const formula = cell.isFormula ? (cell.compiledFormula?.toFormulaString(getters) ?? '') : '';
         if (!callsUs(formula)) return [];
         const position = getters.getCellPosition(cell.id);
-        const own = { top: position.row, bottom: position.row, left: position.col, right: position.col };
-        const zone = getters.getSpreadZone(position) ?? own;
-        const address = formatAddress({ sheet: getters.getSheetName(sheetId), cell: formatZone(own) });
-        return [{ address, formula, values: this.#block(sheetId, zone).values }];
+        const address = formatAddress({ sheet: getters.getSheetName(sheetId), cell: `${columnLetters(position.col)}${position.row + 1}` });
+        const { value } = getters.getEvaluatedCell(position);
+        return [{ address, formula, value: value === '' ? null : value }];
       }),
     );
+  }
+
+  /** What a formula shows with all it spills over. */
+  shownBy(address: string): Range {
+    const { getters } = this.#model;
+    const parsed = parseAddress(address);
+    const cell = parsed === null ? null : parseCell(parsed.cell);
+    const sheetId = parsed === null ? undefined : getters.getSheetIdByName(parsed.sheet);
+    if (cell === null || sheetId === undefined) return [[null]];
+    const own = { top: cell.row, bottom: cell.row, left: cell.column, right: cell.column };
+    return this.#block(sheetId, getters.getSpreadZone({ sheetId, row: cell.row, col: cell.column }) ?? own).values;
+  }
+
+  #makeSheet(sheetId: string, name: string, draft: SheetDraft): void {
+    const { getters } = this.#model;
+    const columns = Math.max(0, ...draft.rows.map((row) => row.length));
+    const { room = { rows: 0, columns: 0 } } = draft;
+    this.#model.dispatch('CREATE_SHEET', { sheetId, name, position: getters.getSheetIds().length });
+    this.#enlarge(sheetId, Math.max(draft.rows.length, room.rows) + SPARE_ROWS, Math.max(columns, room.columns) + SPARE_COLUMNS);
+    for (const { name: own, cells } of draft.names ?? []) {
+      const range = getters.getRangeDataFromZone(sheetId, parseZone(cells)!);
+      // Without the sheet the engine measures the range against the sheet in view.
+      this.#model.dispatch('CREATE_NAMED_RANGE', { sheetId, name: own, ranges: [range] });
+    }
+    this.#dress(sheetId, draft);
   }
 
   #enlarge(sheetId: string, rows: number, columns: number): void {
@@ -119,18 +142,19 @@ export class EngineTables {
 
   #put(sheetId: string, top: number, left: number, cells: readonly (readonly DraftCell[])[], skipsBlanks = false): void {
     const locale = this.#model.getters.getLocale();
-    const steps = cells.flatMap((row, r) =>
-      row.flatMap((cell, c) => {
-        if (cell === null && skipsBlanks) return [];
-        const content = cell !== null && typeof cell === 'object' ? cell.formula : literal(cell, this.#engine, locale);
-        return [{ command: 'UPDATE_CELL', payload: { sheetId, row: top + r, col: left + c, content } }];
-      }),
-    );
-    runBulk(this.#model, steps);
+    runBulk(this.#model, () => {
+      cells.forEach((row, r) =>
+        row.forEach((cell, c) => {
+          if (cell === null && skipsBlanks) return;
+          const content = cell !== null && typeof cell === 'object' ? cell.formula : literal(cell, this.#engine, locale);
+          this.#model.dispatch('UPDATE_CELL', { sheetId, row: top + r, col: left + c, content });
+        }),
+      );
+    });
   }
 
   #dress(sheetId: string, { rows, headingRows = [], titleRows = [], widths = [], wholes = [], alarms = [] }: SheetDraft): void {
-    runBulk(this.#model, alarms.map((cell) => alarmStep(this.#model.getters, sheetId, cell)));
+    for (const cell of alarms) addAlarm(this.#model, sheetId, cell);
     const look = (lines: readonly number[], style: object): void => {
       const filled = lines.filter((row) => rows[row].length > 0);
       const target = filled.map((row) => ({ top: row, bottom: row, left: 0, right: rows[row].length - 1 }));
@@ -140,18 +164,10 @@ export class EngineTables {
     look(titleRows, TITLE);
     const sheetName = this.#model.getters.getSheetName(sheetId);
     widths.forEach((width, column) => {
-      const size = width * CHARACTER + MARGIN;
+      const size = widthInPixels(width);
       this.#model.dispatch('RESIZE_COLUMNS_ROWS', { sheetId, sheetName, dimension: 'COL', elements: [column], size });
     });
-    for (const { column, from, least } of wholes) {
-      const zone = { top: from, bottom: rows.length + SPARE_ROWS - 1, left: column, right: column };
-      const criterion = { type: 'isGreaterOrEqualTo', values: [String(least)] };
-      this.#model.dispatch('ADD_DATA_VALIDATION_RULE', {
-        sheetId,
-        ranges: [this.#model.getters.getRangeDataFromZone(sheetId, zone)],
-        rule: { id: crypto.randomUUID(), criterion, isBlocking: false },
-      });
-    }
+    for (const whole of wholes) addWholes(this.#model, sheetId, whole, rows.length + SPARE_ROWS - 1);
   }
 
   #regions(sheetId: string): Zone[] {
@@ -167,6 +183,13 @@ export class EngineTables {
       [rows, columns] = [Math.max(rows, row + 1), Math.max(columns, col + 1)];
     }
     return regionsOf(rows, columns, (row, column) => filled.has(`${row} ${column}`));
+  }
+
+  /** What formulas fill beside their own cells. */
+  #spills(sheetId: string): Zone[] {
+    const { getters } = this.#model;
+    const formulas = getters.getCells(sheetId).filter(({ isFormula }) => isFormula);
+    return formulas.flatMap(({ id }) => getters.getSpreadZone(getters.getCellPosition(id)) ?? []);
   }
 
   #block(sheetId: string, { top, left, bottom, right }: EngineZone): Block {

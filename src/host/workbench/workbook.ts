@@ -1,5 +1,6 @@
 import { columnLetters, formatAddress, parseAddress, parseCell } from '../address';
-import type { Block, DraftCell, OurCell, SheetDraft, WorkbookPort } from '../port';
+import type { Block, Calculation, DraftCell, OurCell, SheetDraft, WorkbookPort } from '../port';
+import type { Range } from '../../sheet/range';
 import type { Engine, EngineModel, EnginePosition } from './engine';
 import { EngineTables } from './tables';
 
@@ -115,6 +116,15 @@ export class WorkbenchWorkbook implements WorkbookPort {
 
   ourCells(): Promise<readonly OurCell[]> {
     return Promise.resolve(this.#tables.ourCells());
+  }
+
+  shownBy(addresses: readonly string[]): Promise<readonly Range[]> {
+    return Promise.resolve(addresses.map((address) => this.#tables.shownBy(address)));
+  }
+
+  /** The engine calculates at once, always. */
+  calculation(): Promise<Calculation> {
+    return Promise.resolve({ isManual: false, isPending: false });
   }
 
   get #tables(): EngineTables {

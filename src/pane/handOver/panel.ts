@@ -1,11 +1,13 @@
 import { html, nothing, type TemplateResult } from 'lit-html';
 import { handOverSheets } from '../../desk/handOver';
-import { makeLive, makePlain, plainState, repair } from '../../desk/plain';
+import { makeLive, makePlain, plainState, repair, type Exchange } from '../../desk/plain';
 import type { Journal } from '../../functions/journal';
-import { formatAddress } from '../../host/address';
+import { formatAddress, parseAddress } from '../../host/address';
 import type { WorkbookPort } from '../../host/port';
-import { counted } from '../model';
-import { liveCases, Panel } from '../panel';
+import { counted } from '../words';
+import { liveCases, Panel, type LiveCase } from '../panel';
+
+const MAKE = 'Make the sheets to hand over';
 
 /** Handing a plan over as plain sheets, making formulas plain and live again, and mending lost ones. */
 export class HandOverPanel extends Panel {
@@ -18,27 +20,27 @@ export class HandOverPanel extends Panel {
   }
 
   protected override async look(): Promise<void> {
-    const { live, plain, lost } = await plainState(this.port);
+    const { live, plain, lost } = await plainState(this.port, this.ours);
     [this.#live, this.#plain, this.#lost] = [live, plain, lost.length];
   }
 
   protected override view(): TemplateResult {
-    const hasPlan = liveCases(this.journal).length > 0;
-    this.element.hidden = !hasPlan && this.#plain.length === 0 && this.#lost === 0;
+    const cases = liveCases(this.journal);
+    this.element.hidden = cases.length === 0 && this.#plain.length === 0 && this.#lost === 0;
     return html`
       <h2>Hand over</h2>
-      ${hasPlan ? this.#handOverView() : nothing} ${this.#lost === 0 ? nothing : this.#lostView()}
+      ${cases.length > 0 ? this.#handOverView(cases) : nothing} ${this.#lost === 0 ? nothing : this.#lostView()}
       ${this.#live.length + this.#plain.length === 0 ? nothing : this.#plainView()}
     `;
   }
 
-  #handOverView(): TemplateResult {
+  #handOverView(cases: readonly LiveCase[]): TemplateResult {
     return html`
       <p class="dp-soft">
         New sheets of plain values that anyone can open: the plan by duty and by person, what is uncovered and why, and a check that says
         so if someone changes the plan into an error.
       </p>
-      ${this.button('Make the sheets to hand over', () => this.#handOver())}
+      ${cases.map((live) => this.button(cases.length === 1 ? MAKE : `${MAKE}: ${sheetsOf(this.journal, live)}`, () => this.#handOver(live)))}
     `;
   }
 
@@ -50,10 +52,8 @@ export class HandOverPanel extends Panel {
   }
 
   #plainView(): TemplateResult {
-    const replaced = async (sheet: string): Promise<string> =>
-      `${counted(await makePlain(this.port, sheet), 'formula', 'formulas')} on ${sheet} replaced by values.`;
-    const putBack = async (sheet: string): Promise<string> =>
-      `${counted(await makeLive(this.port, sheet), 'formula', 'formulas')} put back on ${sheet}.`;
+    const replaced = async (sheet: string): Promise<string> => exchangeWords(await makePlain(this.port, sheet), `on ${sheet} replaced by values.`);
+    const putBack = async (sheet: string): Promise<string> => exchangeWords(await makeLive(this.port, sheet), `put back on ${sheet}.`);
     return html`
       <details>
         <summary>Formulas and plain values</summary>
@@ -65,12 +65,21 @@ export class HandOverPanel extends Panel {
     `;
   }
 
-  async #handOver(): Promise<string> {
-    const [first] = liveCases(this.journal);
-    const names = await this.port.addSheets(handOverSheets(first.solved, today(), await freePrefix(this.port)));
+  async #handOver({ solved }: LiveCase): Promise<string> {
+    const names = await this.port.addSheets(handOverSheets(solved, today(), await freePrefix(this.port)));
     await this.port.select(formatAddress({ sheet: names[0], cell: 'A1' }));
-    return `Made ${counted(names.length, 'sheet', 'sheets')}: ${names.join(', ')}. To send them, save a copy of the workbook with only these.`;
+    return `Made ${counted(names.length, 'sheet', 'sheets')}: ${names.join(', ')}. To send them, select them together and move or copy them to a new book.`;
   }
+}
+
+function exchangeWords({ done, left }: Exchange, what: string): string {
+  return [`${counted(done, 'formula', 'formulas')} ${what}`, ...left].join(' ');
+}
+
+/** Where the formulas of a case are, to tell it from others. */
+function sheetsOf(journal: Journal, { solved }: LiveCase): string {
+  const addresses = journal.calls().flatMap((call) => (call.solved === solved ? [parseAddress(call.address)?.sheet ?? ''] : []));
+  return [...new Set(addresses)].join(', ');
 }
 
 function today(): string {

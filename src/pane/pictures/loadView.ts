@@ -1,6 +1,6 @@
 import { html, nothing, type TemplateResult } from 'lit-html';
 import { joinNames } from '../../sheet/write';
-import { counted } from '../model';
+import { counted } from '../words';
 import type { LoadBar, LoadPicture } from './loadPicture';
 
 /** Names of a group before the rest is only counted. */

@@ -1,6 +1,6 @@
 import { html, nothing, type TemplateResult } from 'lit-html';
 import { answerDrafts } from '../../desk/answers';
-import { blankDrafts } from '../../desk/blankTables';
+import { blankDrafts, blankRules } from '../../desk/blankTables';
 import { preview } from '../../desk/preview';
 import { candidatesOf, joined, propose, ROLES, turn, type Candidate, type Role } from '../../desk/propose';
 import type { Journal } from '../../functions/journal';
@@ -31,7 +31,7 @@ export class StartPanel extends Panel {
   protected override async look(): Promise<void> {
     if (!this.#isOpen && this.journal.calls().length > 0) return;
     // What our formulas spill looks like tables too.
-    const answers = new Set((await this.port.ourCells()).map(({ address }) => address));
+    const answers = new Set(this.ours.map(({ address }) => address));
     const blocks = joined(await this.port.blocks()).filter(({ address }) => ![...answers].some((cell) => isIn(cell, address)));
     this.#proposed = propose(blocks);
     const people = this.#proposed.get('people');
@@ -52,7 +52,7 @@ export class StartPanel extends Panel {
   #toggle(isOpen: boolean): void {
     if (isOpen === this.#isOpen) return;
     this.#isOpen = isOpen;
-    void this.refresh();
+    void this.refresh(this.ours);
   }
 
   #bodyView(): TemplateResult {
@@ -113,19 +113,28 @@ export class StartPanel extends Panel {
   }
 
   async #answer(chosen: ReadonlyMap<Role, Candidate>): Promise<string> {
-    const given = ROLES.map((role) => chosen.get(role)?.argument ?? '');
-    const { isLarge } = preview(chosen);
-    const names = await this.port.addSheets(answerDrafts(given, isLarge));
-    await this.port.select(formatAddress({ sheet: names[0], cell: 'A1' }));
-    const left = isLarge ? ' DUTY.REMEDIES and DUTY.ABSENCES were left out: in a case of this size they would slow every change.' : '';
-    return `The answers are on ${names.join(' and ')}. They follow every change of your tables.${left}`;
+    const rules = chosen.has('rules') ? null : await blankRules(this.port);
+    const given = ROLES.map((role) => chosen.get(role)?.argument ?? (role === 'rules' ? (rules?.reference ?? '') : ''));
+    const { size } = preview(chosen);
+    const answers = answerDrafts(given, size);
+    const made = await this.port.addSheets(rules === null ? answers : [...answers, rules]);
+    await this.port.select(formatAddress({ sheet: made[0], cell: 'A1' }));
+    const names = made.slice(0, answers.length);
+    const left = size.isLarge ? ' DUTY.GRID, DUTY.REMEDIES and DUTY.ABSENCES were left out: in a case of this size they would slow every change.' : '';
+    const place = rules === null ? '' : ` What you decide is written on ${made[answers.length]}.`;
+    return `The answers are on ${inWords(names)}. They follow every change of your tables.${place}${left}`;
   }
 
   async #layOut(): Promise<string> {
     const names = await this.port.addSheets(await blankDrafts(this.port));
     await this.port.select(formatAddress({ sheet: names[0], cell: 'A4' }));
-    return `Fill the tables on ${names[0]}; the answers appear on ${names.slice(1).join(' and ')}.`;
+    return `Fill the tables on ${names[0]}; the answers appear on ${inWords(names.slice(1))}.`;
   }
+}
+
+/** `Results, Grid and Why`. */
+function inWords(names: readonly string[]): string {
+  return names.length < 2 ? names.join('') : `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`;
 }
 
 function nameOf({ block, isGrid }: Candidate): string {

@@ -1,6 +1,6 @@
 import { names, shortageReason } from '../../functions/reasons';
 import type { Solved } from '../../functions/solved';
-import { counted } from '../model';
+import { counted } from '../words';
 
 /** What there is to know of a duty, in sentences: its seats, and why it is short if it is. */
 export function aboutDuty(solved: Solved, duty: number): string[] {

@@ -48,7 +48,7 @@ export class WhatIfPanel extends CasePanel {
       </label>
       <datalist id="dp-names">${[...duties, ...people].map(({ name }) => html`<option value=${name}></option>`)}</datalist>
       ${this.#answerView(live)}
-      ${this.#decisions.length === 0 ? nothing : this.#decisionsView()}
+      ${this.#decisions.length === 0 ? nothing : this.#decisionsView(live)}
     `;
   }
 
@@ -69,7 +69,7 @@ export class WhatIfPanel extends CasePanel {
     if (found === undefined || (key === this.#asked && found.address === live.address)) return;
     this.choose(found.address);
     this.#ask(String(value));
-    if (found.address !== live.address) await this.refresh();
+    if (found.address !== live.address) await this.refresh(this.ours);
   }
 
   #shownName({ case: { duties, people } }: Solved): string {
@@ -139,7 +139,7 @@ export class WhatIfPanel extends CasePanel {
     `;
   }
 
-  #decisionsView(): TemplateResult {
+  #decisionsView({ address }: LiveCase): TemplateResult {
     return html`
       <details>
         <summary>Decisions in the rules (${this.#decisions.length})</summary>
@@ -148,7 +148,7 @@ export class WhatIfPanel extends CasePanel {
             (decision) => html`
               <li class="dp-item">
                 <span class="dp-clip" dir="auto">${decision.word}: ${decision.person}, ${decision.duty}</span>
-                ${this.button('Take away', () => undecide(this.port, decision))}
+                ${this.button('Take away', () => undecide(this.port, address, decision))}
               </li>
             `,
           )}

@@ -24,6 +24,8 @@ export function isAlarm({ type, formula, range }: Pick<Rule, 'type' | 'formula' 
   return type === 'expression' && first === alarmFormula(range);
 }
 
-function alarmFormula(cell: string): string {
+/** Asked of the first cell of a range; a file means the others by it too. */
+function alarmFormula(range: string): string {
+  const [cell] = range.split(':');
   return `LEFT(${cell},${ALARM.length})="${ALARM}"`;
 }

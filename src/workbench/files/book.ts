@@ -1,3 +1,5 @@
+import type { ConditionalRule, DataValidation, WriteSheet } from 'hucre';
+
 /** A workbook between a file and the sheet engine: what both of them understand. */
 export interface Book {
   readonly sheets: readonly BookSheet[];
@@ -7,6 +9,10 @@ export interface Book {
   readonly otherNames?: readonly StoredName[];
   /** What the file held beyond this, in words; empty where nothing is lost. */
   readonly lost: readonly string[];
+  /** The sheet in view, from 0; the first where it is left out. */
+  readonly active?: number;
+  /** Typeface and size of cells that say nothing of them; the usual ones where it is left out. */
+  readonly font?: { readonly name: string; readonly size: number };
 }
 
 /** A named range. */
@@ -42,10 +48,31 @@ export interface BookSheet {
   readonly tabColour?: string;
   /** Cells drawn as an alarm while their text says that something is wrong. */
   readonly alarms?: readonly string[];
+  /** What may be typed into ranges. */
+  readonly checks?: readonly BookCheck[];
+  /** How the sheet is printed and enlarged: kept for the file, unknown to the engine. */
+  readonly aside?: BookAside;
+  /** Conditional formats beside the alarms. */
+  readonly conditions?: readonly BookCondition[];
   /** Merged ranges as `A1:B2`. */
   readonly merges: readonly string[];
   /** Rows and columns that stay in view. */
   readonly frozen: { readonly rows: number; readonly columns: number };
+}
+
+/** What a file holds of a whole sheet beyond its cells. */
+export type BookAside = Pick<WriteSheet, 'pageSetup' | 'headerFooter'> & { readonly zoomScale?: number; readonly rightToLeft?: boolean };
+
+/** What may be typed into ranges, as a file words it; formulas are spelled as typed, without equals sign. */
+export interface BookCheck {
+  readonly ranges: readonly string[];
+  readonly rule: Omit<DataValidation, 'range'>;
+}
+
+/** How cells look while something holds, as a file words it; formulas are spelled as typed, without equals sign. */
+export interface BookCondition {
+  readonly ranges: readonly string[];
+  readonly rule: Omit<ConditionalRule, 'range' | 'priority' | 'formula'> & { readonly formulas: readonly string[] };
 }
 
 /** One cell that holds or shows something. */
@@ -80,6 +107,20 @@ export interface BookStyle {
   readonly vertical?: 'top' | 'middle' | 'bottom';
   readonly wrap?: boolean;
   readonly border?: BookBorder;
+  /** In degrees as files count them: 1 to 90 climbing, 91 to 180 falling. */
+  readonly rotation?: number;
+  readonly unseen?: BookUnseen;
+}
+
+/** What belongs to the look of a cell and is kept for the file, though the page does not draw it. */
+export interface BookUnseen {
+  readonly font?: string;
+  readonly underline?: 'double' | 'singleAccounting' | 'doubleAccounting';
+  readonly script?: 'superscript' | 'subscript';
+  readonly indent?: number;
+  readonly shrink?: true;
+  readonly horizontal?: 'fill' | 'justify' | 'centerContinuous' | 'distributed';
+  readonly upright?: true;
 }
 
 /** The lines around a cell. */

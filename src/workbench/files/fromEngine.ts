@@ -11,7 +11,10 @@ import type {
   EngineStyle,
 } from '../../host/workbench/engine';
 import type { Book, BookBorder, BookCell, BookSheet, BookStyle } from './book';
+import { fromEngineChecks } from './checks';
+import { fromEngineConditions } from './conditions';
 import { given } from './styles';
+import { engineId } from './toEngine';
 
 /** Codes of formulas that the engine cannot read; what they come to elsewhere is not known here. */
 const UNREAD: ReadonlySet<unknown> = new Set(['#BAD_EXPR', '#NAME?']);
@@ -20,13 +23,19 @@ const UNREAD: ReadonlySet<unknown> = new Set(['#BAD_EXPR', '#NAME?']);
  * The workbook in the engine as a book: contents, last values, and how far formulas spill.
  *
  * @param formats the file's number formats by those the engine shows in their place
+ * @param opened the book as it was opened, for what the engine cannot hold
  */
-export function fromEngine(model: EngineModel, formats: ReadonlyMap<string, string> = new Map()): Book {
+export function fromEngine(model: EngineModel, formats: ReadonlyMap<string, string> = new Map(), opened?: Book): Book {
   const data = model.exportData();
   return {
-    sheets: data.sheets.map((sheet) => fromEngineSheet(sheet, data, model, formats)),
+    sheets: data.sheets.map((sheet) => ({
+      ...fromEngineSheet(sheet, data, model, formats),
+      ...given({ aside: opened?.sheets.find((_, i) => engineId(i) === sheet.id)?.aside }),
+    })),
     names: Object.entries(data.namedRanges).map(([name, reference]) => ({ name, reference })),
+    ...given({ otherNames: opened?.otherNames, font: opened?.font }),
     lost: [],
+    active: Math.max(0, data.sheets.findIndex(({ id }) => id === model.getters.getActiveSheetId())),
   };
 }
 
@@ -44,6 +53,8 @@ function fromEngineSheet(sheet: EngineSheet, data: EngineData, model: EngineMode
     gridLines: sheet.areGridLinesVisible !== false,
     ...given({ tabColour: sheet.color?.toLowerCase() }),
     alarms: alarmCells(sheet.conditionalFormats),
+    checks: fromEngineChecks(sheet.dataValidationRules),
+    conditions: fromEngineConditions(sheet.conditionalFormats),
     merges: sheet.merges,
     frozen: { rows: sheet.panes?.ySplit ?? 0, columns: sheet.panes?.xSplit ?? 0 },
   };
@@ -122,7 +133,8 @@ function byCell<T>(zones: Readonly<Record<string, number>>, lookUp: (number: num
 }
 
 function fromEngineStyle(style: EngineStyle | undefined, border: EngineBorder | undefined): BookStyle | null {
-  const { bold, italic, underline, strikethrough, textColor, fillColor, fontSize, align, verticalAlign, wrapping } = style ?? {};
+  const { bold, italic, underline, strikethrough, textColor, fillColor, fontSize } = style ?? {};
+  const { align, verticalAlign, wrapping, rotation = 0, unseen } = style ?? {};
   const lines = Object.entries(border ?? {}).map(([side, line]) => [side, { style: line.style, colour: line.color.toLowerCase() }]);
   const read = given({
     bold: bold === true ? bold : undefined,
@@ -135,7 +147,15 @@ function fromEngineStyle(style: EngineStyle | undefined, border: EngineBorder | 
     align,
     vertical: verticalAlign,
     wrap: wrapping === 'wrap' ? true : undefined,
+    rotation: rotation === 0 ? undefined : degrees(rotation),
+    unseen,
     border: lines.length > 0 ? (Object.fromEntries(lines) as BookBorder) : undefined,
   });
   return Object.keys(read).length === 0 ? null : read;
+}
+
+/** An angle as files count it: up to 90 where text climbs, from 91 where it falls. */
+function degrees(radians: number): number {
+  const angle = Math.round((radians / Math.PI) * 180);
+  return angle < 0 ? -angle : angle + 90;
 }

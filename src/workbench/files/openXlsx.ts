@@ -1,12 +1,13 @@
 import { dateToSerial, readXlsx, type Cell, type CellValue, type Sheet, type Workbook } from 'hucre';
 import { columnLetters, parseCell } from '../../host/address';
-import type { Book, BookCell, BookName, BookSheet, StoredName } from './book';
+import type { Book, BookAside, BookCell, BookName, BookSheet, StoredName } from './book';
 import { lostParts } from './lost';
 import { sharedFormulas } from './sharedFormulas';
 import { toTyped } from './spelling';
 import { tableNames, withoutTables, type FileTable } from './structured';
 import { isAlarm } from './alarms';
-import { given, readColour, readStyle } from './styles';
+import { readChecks, readConditions, type Spell } from './readRules';
+import { given, readColour, readStyle, USUAL_FONT } from './styles';
 
 /** Pixels of a column as wide as one digit, near enough for the usual fonts. */
 const PIXELS_A_DIGIT = 7;
@@ -17,6 +18,8 @@ const ONE_RANGE = /^(?:'(?:[^']|'')+'|[\p{L}_][\p{L}\p{N}_.]*)!\$?[A-Z]{1,3}(?:\
 /** What a sheet is read with. */
 interface Surroundings {
   readonly theme: readonly string[];
+  /** The font of cells that say nothing of theirs. */
+  readonly font: typeof USUAL_FONT;
   readonly tables: ReadonlyMap<string, FileTable>;
 }
 
@@ -35,6 +38,7 @@ export async function openXlsx(bytes: Uint8Array): Promise<Book> {
   const tables = fileTables(workbook);
   const surroundings = {
     theme: workbook.themeColors ?? [],
+    font: { name: workbook.defaultFont?.name ?? USUAL_FONT.name, size: workbook.defaultFont?.size ?? USUAL_FONT.size },
     tables: new Map(tables.map((table) => [table.name.toLowerCase(), table])),
   };
   const { names, otherNames } = readNames(workbook);
@@ -43,7 +47,9 @@ export async function openXlsx(bytes: Uint8Array): Promise<Book> {
     sheets: workbook.sheets.map((sheet) => readSheet(sheet, surroundings)),
     names: [...names, ...tableNames(tables, taken)].map(({ name, reference }) => ({ name, reference: plain(reference) })),
     otherNames,
-    lost: lostParts(bytes, workbook),
+    lost: await lostParts(bytes, workbook),
+    active: workbook.activeSheet ?? 0,
+    font: surroundings.font,
   };
 }
 
@@ -84,10 +90,11 @@ function readSheet(sheet: Sheet, surroundings: Surroundings): BookSheet {
       const key = `${row},${column}`;
       const stored = filledDown.get(key) ?? sheet.cells?.get(key)?.formula;
       const formula = stored === undefined || stored === '' ? null : toTyped(withoutTables(stored, surroundings.tables, row));
-      const read = readCell(row, column, spilled.has(key) ? null : value, formula, sheet.cells?.get(key), surroundings.theme);
+      const read = readCell(row, column, spilled.has(key) ? null : value, formula, sheet.cells?.get(key), surroundings);
       if (read !== null) cells.push(read);
     });
   });
+  const spell: Spell = (formula, row) => toTyped(withoutTables(formula, surroundings.tables, row)).slice(1);
   const columns = [...(sheet.columns ?? []).entries()];
   const rows = [...(sheet.rowDefs ?? [])];
   return {
@@ -101,11 +108,25 @@ function readSheet(sheet: Sheet, surroundings: Surroundings): BookSheet {
     gridLines: sheet.view?.showGridLines !== false,
     ...given({ tabColour: readColour(sheet.view?.tabColor, surroundings.theme) }),
     ...given({ alarms: alarmsOf(sheet) }),
+    checks: readChecks(sheet, spell),
+    conditions: readConditions(sheet, spell, surroundings.theme),
+    aside: readAside(sheet),
     merges: (sheet.merges ?? []).map(
       ({ startRow, startCol, endRow, endCol }) => `${columnLetters(startCol)}${startRow + 1}:${columnLetters(endCol)}${endRow + 1}`,
     ),
     frozen: { rows: sheet.freezePane?.rows ?? 0, columns: sheet.freezePane?.columns ?? 0 },
   };
+}
+
+/** Without what names cells: it would not follow when rows are inserted. */
+function readAside({ pageSetup, headerFooter, view }: Sheet): BookAside {
+  const setup = given({ ...pageSetup, printArea: undefined, printTitlesRow: undefined, printTitlesColumn: undefined });
+  return given({
+    pageSetup: Object.keys(setup).length === 0 ? undefined : setup,
+    headerFooter,
+    zoomScale: view?.zoomScale,
+    rightToLeft: view?.rightToLeft,
+  });
 }
 
 /** The cells that are alarms; undefined where there are none. */
@@ -146,9 +167,9 @@ function readCell(
   value: CellValue,
   formula: string | null,
   cell: Cell | undefined,
-  theme: readonly string[],
+  { theme, font }: Surroundings,
 ): BookCell | null {
-  const style = readStyle(cell?.style, theme);
+  const style = readStyle(cell?.style, theme, font);
   const isDate = value instanceof Date;
   const plain = isDate ? dateToSerial(value) : value;
   if (formula === null && plain === null && style === null) return null;

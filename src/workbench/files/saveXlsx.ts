@@ -1,6 +1,8 @@
 import { writeXlsx, type Cell, type CellValue, type ColumnDef, type RowDef, type WriteSheet } from 'hucre';
 import { columnLetters, parseCell } from '../../host/address';
 import { alarmRules } from './alarms';
+import { writeChecks } from './checks';
+import { writeConditions } from './conditions';
 import type { Book, BookCell, BookSheet } from './book';
 import { isArrayFormula, toStored } from './spelling';
 import { given, writeColour, writeStyle } from './styles';
@@ -22,6 +24,7 @@ export async function saveXlsx(book: Book, written = new Date()): Promise<Uint8A
       ...book.names.map(({ name, reference }) => ({ name, range: absolute(reference) })),
       ...(book.otherNames ?? []).map(({ name, content, sheet }) => ({ name, range: content, ...given({ scope: sheet }) })),
     ],
+    ...given({ activeSheet: book.active, defaultFont: book.font }),
     properties: { creator: 'Dutyproof workbench', created: written, modified: written },
   });
 }
@@ -45,13 +48,16 @@ function writeSheet(sheet: BookSheet): WriteSheet {
       if (from === null || to === null || from === undefined || to === undefined) return [];
       return [{ startRow: from.row, startCol: from.column, endRow: to.row, endCol: to.column }];
     }),
+    ...given({ pageSetup: sheet.aside?.pageSetup, headerFooter: sheet.aside?.headerFooter }),
     view: {
+      ...given({ zoomScale: sheet.aside?.zoomScale, rightToLeft: sheet.aside?.rightToLeft }),
       showGridLines: sheet.gridLines !== false,
       ...(sheet.tabColour === undefined ? {} : { tabColor: writeColour(sheet.tabColour) }),
     },
     ...(sheet.frozen.rows + sheet.frozen.columns > 0 ? { freezePane: sheet.frozen } : {}),
     ...(sheet.hidden ? { hidden: true } : {}),
-    ...(sheet.alarms === undefined || sheet.alarms.length === 0 ? {} : { conditionalRules: alarmRules(sheet.alarms) }),
+    dataValidations: writeChecks(sheet.checks),
+    conditionalRules: [...alarmRules(sheet.alarms ?? []), ...writeConditions(sheet.conditions ?? [], (sheet.alarms ?? []).length + 1)],
   };
 }
 

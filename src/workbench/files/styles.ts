@@ -1,8 +1,10 @@
 import { resolveThemeColor, type BorderSide, type BorderStyle, type CellStyle, type Color } from 'hucre';
-import type { BookBorder, BookLine, BookStyle } from './book';
+import type { BookBorder, BookLine, BookStyle, BookUnseen } from './book';
 
-/** The size of the usual font in points; it is not stored with a cell. */
-const USUAL_SIZE = 11;
+/** The usual font and its size in points; they are not stored with a cell. */
+export const USUAL_FONT = { name: 'Calibri', size: 11 };
+/** The number files have in place of an angle for letters below each other. */
+const UPRIGHT = 255;
 const SIDES = ['top', 'right', 'bottom', 'left'] as const;
 const LINES: Readonly<Record<string, BookLine['style']>> = {
   thin: 'thin',
@@ -20,8 +22,12 @@ const PALETTE = (
   '333300 993300 993366 333399 333333'
 ).split(' ');
 
-/** @param theme the colours of the file's theme, by number; returns null for the usual look */
-export function readStyle(style: CellStyle | undefined, theme: readonly string[]): BookStyle | null {
+/**
+ * @param theme the colours of the file's theme, by number
+ * @param usual the font of cells that say nothing of it
+ * @returns null for the usual look
+ */
+export function readStyle(style: CellStyle | undefined, theme: readonly string[], usual = USUAL_FONT): BookStyle | null {
   if (style === undefined) return null;
   const { font, fill, alignment, border } = style;
   const solid = fill?.type === 'pattern' && fill.pattern === 'solid' ? readColour(fill.fgColor, theme) : undefined;
@@ -34,22 +40,56 @@ export function readStyle(style: CellStyle | undefined, theme: readonly string[]
     strikethrough: font?.strikethrough === true ? true : undefined,
     colour: unless('#000000', readColour(font?.color, theme)),
     fill: solid,
-    size: unless(USUAL_SIZE, font?.size),
+    size: unless(usual.size, font?.size),
     align: horizontal === 'left' || horizontal === 'center' || horizontal === 'right' ? horizontal : undefined,
     vertical: vertical === 'center' ? ('middle' as const) : vertical === 'top' ? vertical : undefined,
     wrap: alignment?.wrapText === true ? true : undefined,
     border: readBorder(border, theme),
+    rotation: unless(0, unless(UPRIGHT, alignment?.textRotation)),
+    unseen: readUnseen(style, usual.name),
   });
   return Object.keys(read).length === 0 ? null : read;
+}
+
+function readUnseen({ font, alignment }: CellStyle, usualName: string): BookUnseen | undefined {
+  const horizontal = alignment?.horizontal;
+  const unseen = given({
+    font: unless(usualName, font?.name),
+    underline: typeof font?.underline === 'string' && font.underline !== 'single' ? font.underline : undefined,
+    script: font?.vertAlign,
+    indent: unless(0, alignment?.indent),
+    shrink: alignment?.shrinkToFit === true ? (true as const) : undefined,
+    horizontal:
+      horizontal === undefined || horizontal === 'general' || horizontal === 'left' || horizontal === 'center' || horizontal === 'right'
+        ? undefined
+        : horizontal,
+    upright: alignment?.textRotation === UPRIGHT ? (true as const) : undefined,
+  });
+  return Object.keys(unseen).length === 0 ? undefined : unseen;
 }
 
 /** @returns null for the usual look */
 export function writeStyle(style: BookStyle | null, format: string | null): CellStyle | null {
   if (style === null && format === null) return null;
-  const { bold, italic, underline, strikethrough, colour, fill, size, align, vertical, wrap, border } = style ?? {};
-  const font = given({ bold, italic, underline, strikethrough, size, color: colour === undefined ? undefined : writeColour(colour) });
-  const middle = vertical === 'middle' ? ('center' as const) : vertical;
-  const alignment = given({ horizontal: align, vertical: middle, wrapText: wrap });
+  const { bold, italic, underline, strikethrough, colour, fill, size, align, vertical, wrap, border, rotation, unseen } = style ?? {};
+  const font = given({
+    bold,
+    italic,
+    underline: underline === true ? (unseen?.underline ?? true) : undefined,
+    strikethrough,
+    size,
+    name: unseen?.font,
+    vertAlign: unseen?.script,
+    color: colour === undefined ? undefined : writeColour(colour),
+  });
+  const alignment = given({
+    horizontal: align ?? unseen?.horizontal,
+    vertical: vertical === 'middle' ? ('center' as const) : vertical,
+    wrapText: wrap,
+    indent: unseen?.indent,
+    shrinkToFit: unseen?.shrink,
+    textRotation: rotation ?? (unseen?.upright === true ? UPRIGHT : undefined),
+  });
   return given({
     font: Object.keys(font).length > 0 ? font : undefined,
     alignment: Object.keys(alignment).length > 0 ? alignment : undefined,

@@ -3,6 +3,8 @@ import { loadedAlarms } from '../../host/workbench/alarms';
 import { literal } from '../../host/workbench/literal';
 import type { Engine, EngineBorder, EngineData, EngineHeader, EngineLocale, EngineSheet, EngineStyle } from '../../host/workbench/engine';
 import type { Book, BookSheet, BookStyle } from './book';
+import { toEngineChecks } from './checks';
+import { toEngineConditions } from './conditions';
 import { formatTable, type FormatTable } from './formats';
 import { given } from './styles';
 
@@ -39,7 +41,10 @@ export function toEngineData(book: Book, engine: Engine, room: ReadonlyMap<strin
   const numbered = { styles: new Numbered<EngineStyle>(), formats: new Numbered<string>(), borders: new Numbered<EngineBorder>() };
   const formats = formatTable(book, engine);
   const sheets = book.sheets.map((sheet, i) => {
-    const loaded = toEngineSheet(sheet, `sheet${i + 1}`, numbered, formats, engine);
+    const loaded = {
+      ...toEngineSheet(sheet, engineId(i), numbered, formats, engine),
+      dataValidationRules: toEngineChecks(sheet.checks ?? [], book.names, engine),
+    };
     const { rows, columns } = room.get(sheet.name) ?? { rows: 0, columns: 0 };
     return { ...loaded, rowNumber: Math.max(loaded.rowNumber, rows), colNumber: Math.max(loaded.colNumber, columns) };
   });
@@ -52,6 +57,11 @@ export function toEngineData(book: Book, engine: Engine, room: ReadonlyMap<strin
     settings: { locale: LOCALE, disableCellAnimations: true },
     namedRanges: Object.fromEntries(book.names.map(({ name, reference }) => [name, reference])),
   };
+}
+
+/** By what the engine knows the sheets of a book, counted from 0; sheets made later have other ids. */
+export function engineId(sheet: number): string {
+  return `sheet${sheet + 1}`;
 }
 
 /** Numbers things from 1, equal ones alike. */
@@ -107,7 +117,7 @@ function toEngineSheet(
     cols: headers(sheet.widths, sheet.hiddenColumns),
     rows: headers(sheet.heights, sheet.hiddenRows),
     merges: sheet.merges,
-    conditionalFormats: loadedAlarms(sheet.alarms ?? []),
+    conditionalFormats: [...loadedAlarms(sheet.alarms ?? []), ...toEngineConditions(sheet.conditions ?? [], engine)],
     isVisible: !sheet.hidden,
     areGridLinesVisible: sheet.gridLines !== false,
     ...given({ color: sheet.tabColour }),
@@ -122,12 +132,20 @@ function headers(sizes: ReadonlyMap<number, number> = new Map(), hidden: readonl
   return table;
 }
 
-function toEngineStyle({ colour, fill, size, wrap, vertical, border, ...rest }: BookStyle): EngineStyle & { border?: EngineBorder } {
+type Look = EngineStyle & { readonly border?: EngineBorder };
+
+function toEngineStyle({ colour, fill, size, wrap, vertical, border, rotation, ...rest }: BookStyle): Look {
   const lines = Object.entries(border ?? {}).map(([side, line]) => [side, { style: line.style, color: line.colour }]);
   return {
     ...rest,
     ...given({ textColor: colour, fillColor: fill, fontSize: size, verticalAlign: vertical }),
+    ...(rotation === undefined ? {} : { rotation: radians(rotation) }),
     ...(wrap === true ? { wrapping: 'wrap' as const } : {}),
     ...(lines.length > 0 ? { border: Object.fromEntries(lines) as EngineBorder } : {}),
   };
+}
+
+/** Files count degrees from 1 to 90 where text climbs, and from 91 where it falls. */
+function radians(degrees: number): number {
+  return ((degrees <= 90 ? -degrees : degrees - 90) / 180) * Math.PI;
 }

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { Journal } from '../../../src/functions/journal';
 import { FUNCTIONS } from '../../../src/functions/registry';
 import { registerInEngine } from '../../../src/host/workbench/register';
-import { answerSheets } from '../../../src/workbench/answerSheets';
+import { gridSheet, resultsSheet } from '../../../src/workbench/demoSheets';
 import { openCsv } from '../../../src/workbench/files/openCsv';
 import { makeModel } from '../../../src/workbench/files/room';
 import { engine } from '../../helpers/engine';
@@ -17,8 +17,9 @@ describe('sheets', () => {
       openCsv('pairs.csv', `Duty,Person\n${rows(2000, (i) => `Duty ${i},Person ${i % 40}`)}`, taken),
       openCsv('people.csv', `Person,Maximum\n${rows(40, (i) => `Person ${i},99`)}`, taken),
     ];
-    const { book } = answerSheets({ sheets, names: [], lost: [] })!;
-    const { getters } = makeModel(book, engine);
+    const given = ['pairs!A1:B2001', 'people!A1:B41'];
+    const answers = [resultsSheet('Results', given), gridSheet('Grid', given, 40)];
+    const { getters } = makeModel({ sheets: [...sheets, ...answers], names: [], lost: [] }, engine);
     for (const [name, col, row] of [['Results', 3, 2001], ['Grid', 0, 2002]] as const) {
       const sheetId = getters.getSheetIdByName(name)!;
       expect(getters.getEvaluatedCell({ sheetId, col, row }).type).toBe('text');
