@@ -31,12 +31,12 @@ export const PANEL_STYLE = `
 .dp-bars li { display: grid; grid-template-columns: 1fr auto; gap: 0 8px; padding: 3px 0; }
 .dp-bar-name { -webkit-line-clamp: 1; }
 .dp-bar-words { font-variant-numeric: tabular-nums; font-size: 13px; color: var(--dp-soft); }
-.dp-meter { position: relative; grid-column: 1 / 3; height: 9px; }
+.dp-meter { position: relative; grid-column: 1 / 3; height: 9px; margin: 3px 0; }
 .dp-meter span { position: absolute; inset: 0 auto 0 0; border-radius: 2px; }
 .dp-room { border: 1px solid var(--dp-line); background: var(--dp-ground); }
 .dp-fill { background: var(--dp-good); }
 .dp-odd { background: var(--dp-short); }
-.dp-meter .dp-mark { border-right: 3px solid var(--dp-ink); border-radius: 0; }
+.dp-meter .dp-mark { inset: -3px auto -3px 0; border-right: 2px solid var(--dp-ink); border-radius: 0; }
 .dp-wide { grid-column: 1 / 3; }
 @media (forced-colors: active) {
   .dp-fill, .dp-seat { background: CanvasText; border-color: CanvasText; forced-color-adjust: none; }

@@ -35,7 +35,15 @@ async function violations(page: Page): Promise<string[]> {
 describe('the pane', () => {
   it.each(['light', 'dark'] as const)('keeps WCAG 2.2 AA in %s, with everything opened', async (scheme) => {
     const page = await openWorkbench(scheme);
+    const field = page.locator('#pane').getByLabel('A duty or a person');
+    await field.fill('Economics paper');
+    await field.press('Enter');
+    await page.locator('#pane').getByRole('button', { name: 'What follows' }).first().click();
     for (const summary of await page.locator('#pane summary').all()) await summary.click();
+    // The drawings are made when they are looked at.
+    await page.locator('#pane figure').first().waitFor();
+    for (const summary of await page.locator('#pane figure summary').all()) await summary.click();
+    expect(await page.locator('#pane .dp-moves li').count()).toBeGreaterThan(0);
     expect(await violations(page)).toEqual([]);
     await page.close();
   });

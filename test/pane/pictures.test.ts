@@ -34,7 +34,10 @@ describe('the drawing of a bottleneck', () => {
         for (const d of short) expect(pictures.filter(({ knot }) => knot.duties.includes(d))).toHaveLength(1);
         for (const { knot, duties, people, lines, elsewhere, moreElsewhere } of pictures) {
           drawn++;
-          expect(duties).toEqual({ boxes: knot.duties.map((d) => [d]), more: 0 });
+          expect([...duties.boxes].sort(([a], [b]) => a - b)).toEqual(knot.duties.map((d) => [d]));
+          const lacking = duties.boxes.map(([d]) => (plan.heldOfDuty[d] < solved.case.duties[d].need ? 0 : 1));
+          expect(lacking).toEqual([...lacking].sort((a, b) => a - b));
+          expect(duties.more).toBe(0);
           expect(people).toEqual({ boxes: knot.people.map((p) => [p]), more: 0 });
           const expected: string[] = [];
           for (let i = 0; i < pairs.count; i++) {
@@ -42,7 +45,7 @@ describe('the drawing of a bottleneck', () => {
             if (isIn) expected.push(`${pairs.duty[i]} ${pairs.person[i]}`);
           }
           const held = plan.seats.map(({ duty, person }) => `${duty} ${person}`);
-          const text = ({ duty, person }: (typeof lines)[number]): string => `${knot.duties[duty]} ${knot.people[person]}`;
+          const text = ({ duty, person }: (typeof lines)[number]): string => `${duties.boxes[duty][0]} ${knot.people[person]}`;
           const unlisted = held.filter((seat) => knot.duties.includes(Number(seat.split(' ')[0])) && !expected.includes(seat));
           expect(lines.map(text).sort()).toEqual([...expected, ...unlisted].sort());
           for (const line of lines) expect(line.isHeld).toBe(held.includes(text(line)));

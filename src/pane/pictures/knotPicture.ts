@@ -59,7 +59,10 @@ function knotPicture(solved: Solved, knot: Knot): KnotPicture {
   const { pairs } = solved.case;
   const { plan, open } = solved.outcome;
   const isInside = new Set(knot.duties);
-  const takers = new Map(knot.duties.map((duty) => [duty, [] as number[]]));
+  // What is short comes first, so that it is drawn however many there are.
+  const isCovered = (duty: number): number => (plan.heldOfDuty[duty] < solved.case.duties[duty].need ? 0 : 1);
+  const sorted = [...knot.duties].sort((a, b) => isCovered(a) - isCovered(b));
+  const takers = new Map(sorted.map((duty) => [duty, [] as number[]]));
   const tasks = new Map(knot.people.map((person) => [person, [] as number[]]));
   const isHolder = new Set(plan.seats.map(({ duty, person }) => `${duty} ${person}`));
   for (let i = 0; i < pairs.count; i++) {

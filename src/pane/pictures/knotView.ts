@@ -31,13 +31,13 @@ export function knotView(solved: Solved, picture: KnotPicture): TemplateResult {
     <figure class="dp-figure">
       <figcaption>Bottleneck ${knot.number}: ${knot.needed} needed, room for ${knot.places}</figcaption>
       <div class="dp-knot" style="--dp-box:${box}px">
-        ${sideView(duties, (members) => dutyBox(solved, members))}
+        ${sideView(duties, 'dp-box dp-box-short', (members) => dutyBox(solved, members))}
         <svg width=${GAP} height=${height} aria-hidden="true">
           ${lines.map(({ duty, person, isHeld }) => {
             return svg`<line class=${isHeld ? 'dp-held' : ''} x1="0" y1=${at(duties, duty)} x2=${GAP} y2=${at(people, person)} />`;
           })}
         </svg>
-        ${sideView(people, (members) => personBox(solved, picture, members))}
+        ${sideView(people, 'dp-box', (members) => personBox(solved, picture, members))}
       </div>
       ${listView('The same in words', [knotReason(solved.case, knot), ...people.boxes.map((members, p) => personWords(solved, picture, members, p))])}
       ${elsewhere.length === 0
@@ -60,8 +60,8 @@ function rowsOf({ boxes, more }: Side): number {
   return boxes.length + (more > 0 ? 1 : 0);
 }
 
-function sideView({ boxes, more }: Side, box: (members: readonly number[]) => TemplateResult): TemplateResult {
-  return html`<ul class="dp-side">${boxes.map(box)} ${more > 0 ? html`<li class="dp-box">and ${more} more</li>` : nothing}</ul>`;
+function sideView({ boxes, more }: Side, style: string, box: (members: readonly number[]) => TemplateResult): TemplateResult {
+  return html`<ul class="dp-side">${boxes.map(box)} ${more > 0 ? html`<li class=${style}>and ${more} more</li>` : nothing}</ul>`;
 }
 
 function dutyBox({ case: { duties }, outcome: { plan } }: Solved, box: readonly number[]): TemplateResult {

@@ -32,7 +32,8 @@ function groupBar({ label, names }: { readonly label: string; readonly names: re
 
 function personBar({ name, load, minimum, maximum }: LoadBar, most: number): TemplateResult {
   const isOdd = load > maximum || load < minimum;
-  const words = `${load} of ${minimum > 0 ? `${minimum} to ` : ''}${maximum}${load > maximum ? ', over' : load < minimum ? ', below' : ''}`;
+  const least = minimum === 0 ? '' : `, ${load < minimum ? 'below' : 'at least'} ${minimum}`;
+  const words = `${load} of ${maximum}${load > maximum ? ', over' : least}`;
   return html`
     <li>
       <span class="dp-bar-name dp-clip" dir="auto">${name}</span><span class="dp-bar-words">${words}</span>

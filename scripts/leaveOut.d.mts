@@ -1,0 +1,2 @@
+/** Leaves the descriptions out of a source of the functions. */
+export default function leaveOut(source: string): string;
