@@ -59,7 +59,6 @@ const page = (filename, template) => new HtmlPlugin({ filename, template, inject
 const excel = {
   ...common,
   name: 'excel',
-  module: { rules: [...common.module.rules, { test: /src.functions.\w+\.ts$/, enforce: 'pre', loader: join(ROOT, 'scripts/leaveOut.mjs') }] },
   entry: { pane: './src/entries/excel.ts' },
   output: { path: join(ROOT, 'dist'), filename: '[name].js' },
   plugins: [page('pane.html', 'src/entries/pane.html'), new CopyPlugin({ patterns: [{ from: 'assets/icons', to: 'icons' }] }), new DerivedFiles()],

@@ -1,2 +1,0 @@
-/** Leaves the descriptions out of a source of the functions. */
-export default function leaveOut(source: string): string;
