@@ -18,6 +18,8 @@ export abstract class Panel {
   /** True while an action is carried out; its buttons wait. */
   protected isBusy = false;
   #said = '';
+  /** The sheets there were when it was said. */
+  #sheets = '';
 
   constructor(title: string, port: WorkbookPort, journal: Journal) {
     this.title = title;
@@ -34,6 +36,8 @@ export abstract class Panel {
    */
   async refresh(ours: readonly OurCell[]): Promise<void> {
     this.ours = ours;
+    // What was said of sheets that have changed since, by undo or by another file, is past.
+    if (this.#said !== '' && !this.isBusy && (await this.#sheetsNow()) !== this.#sheets) this.#said = '';
     // A busy host (Excel, while a cell is being edited) tells nothing: what is drawn stays.
     await this.look().catch(() => undefined);
     this.draw();
@@ -65,14 +69,21 @@ export abstract class Panel {
       this.isBusy = true;
       this.#said = 'Working …';
       this.draw();
+      await painted();
       try {
         this.#said = await step();
       } catch (error) {
         this.#said = error instanceof Busy ? 'An answer is still being searched for. Press again when it is there.' : inWords(error);
       }
+      this.#sheets = await this.#sheetsNow();
       this.isBusy = false;
       await this.refresh(await this.port.ourCells().catch(() => this.ours));
     };
+  }
+
+  async #sheetsNow(): Promise<string> {
+    const names = await this.port.sheetNames().catch(() => null);
+    return names === null ? this.#sheets : JSON.stringify(names);
   }
 
   /** A button that waits while another action is carried out; disabled it would lose the focus. */
@@ -80,6 +91,14 @@ export abstract class Panel {
     return html`<button type="button" aria-disabled=${this.isBusy ? 'true' : 'false'} @click=${this.act(step)}><bdi>${label}</bdi></button>`;
   }
 }
+
+/** Resolves when the page has had time to paint: a step may keep it busy for a second or two. */
+function painted(): Promise<void> {
+  return new Promise((resolve) => setTimeout(resolve, FRAME));
+}
+
+/** Milliseconds within which a page paints what has changed. */
+const FRAME = 20;
 
 /** A case whose plan is at hand, with the cell its first formula stands in. */
 export interface LiveCase {

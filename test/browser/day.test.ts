@@ -138,6 +138,13 @@ describe('a day at the desk', () => {
     await bo.getByRole('button', { name: 'Fix this' }).click();
     await desk.pane.getByText('Fixed: Bo Vinter, Archive. It stands in Rules!A4').waitFor();
     expect(await desk.valueAt('Rules!A4')).toBe('Fixed');
+
+    // What was said of one workbook is not said of the next.
+    await desk.pane.getByText('The answers are on').waitFor();
+    await desk.give({ 'other.csv': 'Item,Pieces\nChairs,12\n' });
+    await desk.page.getByText('Open without saving').click();
+    await desk.pane.getByText('No tables were found yet').waitFor();
+    await desk.pane.getByText('The answers are on').waitFor({ state: 'detached' });
     await desk.page.close();
   });
 });
