@@ -3,6 +3,7 @@ import { proofWords } from '../functions/proofWords';
 import { FUNCTIONS } from '../functions/registry';
 import type { Solved } from '../functions/solved';
 import type { DraftCell, SheetDraft } from '../host/port';
+import { inLines } from './lines';
 import { labelsOf } from './checkTables';
 import { checkSheet, PLAN_NAMES, type CheckSheet } from './handOverCheck';
 
@@ -41,6 +42,9 @@ function listSheet(solved: Solved, id: string, name: string, widths: number[]): 
   return { name, rows: spilled(solved, id), headingRows: [0], widths };
 }
 
+/** Letters to a line: the widths of both columns of the cover sheet, less what wide letters take. */
+const LINE = 80;
+
 function coverSheet(solved: Solved, day: string, { verdict }: CheckSheet): SheetDraft {
   const { plan, method } = solved.outcome;
   const rows: DraftCell[][] = [
@@ -56,26 +60,12 @@ function coverSheet(solved: Solved, day: string, { verdict }: CheckSheet): Sheet
     [null],
     ['Signed by', null],
     [null],
-    ...inLines(CAUTION),
+    ...inLines(CAUTION, LINE),
     [null],
-    ...inLines('The plan was made from the tables as they stood on the date above. It is plain text and numbers; only the check is calculated.'),
+    ...inLines('The plan was made from the tables as they stood on the date above. It is plain text and numbers; only the check is calculated.', LINE),
   ];
   return { name: 'Handed over', rows, titleRows: [0], widths: [26, 60], alarms: ['B9'] };
 }
-
-/** A text in rows that fit on a printed page. */
-function inLines(text: string): DraftCell[][] {
-  const lines = [''];
-  for (const word of text.split(' ')) {
-    const longer = `${lines.at(-1)} ${word}`.trim();
-    if (longer.length <= LINE) lines[lines.length - 1] = longer;
-    else lines.push(word);
-  }
-  return lines.map((line) => [line]);
-}
-
-/** Letters to a line: the widths of both columns of the cover sheet, less what wide letters take. */
-const LINE = 80;
 
 /** A row a seat: duty, person, slot, group, load, and the note. */
 function planRows(solved: Solved): DraftCell[][] {

@@ -4,6 +4,7 @@ import { columnLetters } from '../host/address';
 import { ALARM, type DraftCell, type SheetDraft } from '../host/port';
 import { boundChecks, isProvable, proofTables } from './checkProof';
 import { planChecks, rowTable } from './checkRows';
+import { inLines } from './lines';
 import { caseTables, membershipOf, type Table } from './checkTables';
 
 /** The sheet with the check, and the formulas that give its verdict on other sheets. */
@@ -20,6 +21,8 @@ export const PLAN_NAMES = { PlanDuty: 'A', PlanPerson: 'B', PlanSlot: 'C', PlanG
 const HOLDS = 'All is well: nothing in the plan breaks what is checked';
 /** The rows of the check: title, verdict, blank, headings, checks. */
 const FIRST_CHECK = 4;
+/** Letters to a line below the checks. */
+const LINE = 62;
 /** The tables begin here, a free column after the checks. */
 const FIRST_TABLE = 3;
 
@@ -43,13 +46,13 @@ export function checkSheet(solved: Solved, prefix: string, count: number): Check
   const counts = `B${FIRST_CHECK + 1}:B${FIRST_CHECK + checks.length}`;
   paper.put(0, 0, 'The check');
   paper.put(1, 0, { formula: verdictFormula(counts, checks.length) });
-  paper.put(2, 0, scopeWords(solved, isProven));
   paper.put(3, 0, 'Looked for');
   paper.put(3, 1, 'Found');
   checks.forEach(({ fault, formula }, i) => {
     paper.put(FIRST_CHECK + i, 0, fault);
     paper.put(FIRST_CHECK + i, 1, { formula: named(formula) });
   });
+  inLines(scopeWords(solved, isProven), LINE).forEach(([line], i) => paper.put(FIRST_CHECK + checks.length + 1 + i, 0, line));
   const names = layTables(paper, tables, named).map(({ name, cells }) => ({ name: prefix + name, cells }));
   names.push({ name: `${prefix}Verdict`, cells: 'A2' });
   return {

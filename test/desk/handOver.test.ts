@@ -91,7 +91,7 @@ function type(cell: string, content: string): void {
 /** What is wrong: the faults found, by what was looked for. */
 async function faults(): Promise<Record<string, unknown>> {
   const rows = (await port.read('Check!A5:B60'))!.values;
-  return Object.fromEntries(rows.filter(([fault, count]) => fault !== null && count !== 0).map(([fault, count]): [string, unknown] => [fault as string, count]));
+  return Object.fromEntries(rows.filter(([fault, count]) => fault !== null && count !== null && count !== 0).map(([fault, count]): [string, unknown] => [fault as string, count]));
 }
 
 describe('handing over', () => {
