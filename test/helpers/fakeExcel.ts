@@ -12,6 +12,8 @@ export class FakeExcel {
   readonly names = new Map<string, { sheet: string; zone: Zone } | null>();
   /** Tables by name, headings included. */
   readonly tables = new Map<string, { sheet: string; zone: Zone }>();
+  /** Names of sheets that are protected. */
+  readonly protected = new Set<string>();
   calculation = { calculationMode: 'Automatic', calculationState: 'Done' };
   selected = { sheet: 'Sheet1', zone: parseZone('A1')! };
   readonly changed = new Set<() => unknown>();
@@ -248,24 +250,8 @@ class FakeSheet extends Loadable {
     this.#name = name;
   }
 
-  /** Without cells: the whole sheet, of which only the formulas are ever asked for. */
-  getRange(cells?: string): FakeRange | { getSpecialCellsOrNullObject: (kind: string) => Loadable } {
-    if (cells !== undefined) return new FakeRange(this.context, this.#name, parseZone(cells)!);
-    return { getSpecialCellsOrNullObject: (kind) => this.#formulas(kind) };
-  }
-
-  #formulas(kind: string): Loadable {
-    if (kind !== 'Formulas') throw new Error(`InvalidArgument: ${kind}`);
-    const { excel } = this.context;
-    const used = excel.used(this.#name);
-    const cells: FakeRange[] = [];
-    for (let row = used?.top ?? 1; row <= (used?.bottom ?? 0); row++) {
-      for (let column = used!.left; column <= used!.right; column++) {
-        if (String(excel.at(this.#name, row, column)).startsWith('=')) cells.push(this.getRangeByIndexes(row, column, 1, 1));
-      }
-    }
-    const areas = new Loadable(this.context, () => ({ items: cells }));
-    return Object.assign(new Loadable(this.context, () => nullable(cells.length === 0)), { areas });
+  getRange(cells: string): FakeRange {
+    return new FakeRange(this.context, this.#name, parseZone(cells)!);
   }
 
   getRangeByIndexes(row: number, column: number, rows: number, columns: number): FakeRange {
@@ -324,6 +310,20 @@ class FakeRange extends Loadable {
   getCell(row: number, column: number): FakeRange {
     const [top, left] = [this.zone.top + row, this.zone.left + column];
     return new FakeRange(this.context, this.sheet, { top, left, bottom: top, right: left });
+  }
+
+  getSpecialCellsOrNullObject(kind: string): Loadable {
+    if (kind !== 'Formulas') throw new Error(`InvalidArgument: ${kind}`);
+    const { excel } = this.context;
+    if (excel.protected.has(this.sheet)) throw new Error('AccessDenied');
+    const cells: FakeRange[] = [];
+    for (let row = this.zone.top; row <= this.zone.bottom; row++) {
+      for (let column = this.zone.left; column <= this.zone.right; column++) {
+        if (String(excel.at(this.sheet, row, column)).startsWith('=')) cells.push(this.getCell(row - this.zone.top, column - this.zone.left));
+      }
+    }
+    const areas = new Loadable(this.context, () => ({ items: cells }));
+    return Object.assign(new Loadable(this.context, () => nullable(cells.length === 0)), { areas });
   }
 
   getLastRow(): FakeRange {

@@ -65,4 +65,11 @@ describe('tables and names of Excel', () => {
     excel.calculation = { calculationMode: 'Manual', calculationState: 'Pending' };
     expect(await port.calculation()).toEqual({ isManual: true, isPending: true });
   });
+
+  it('are looked through where a sheet is protected', async () => {
+    const { excel, port } = await workbook();
+    await port.write('Sheet1!L1', [[{ formula: '=DUTY.ASSIGN(Choices[#All],1)' }]]);
+    excel.protected.add('Sheet1');
+    expect((await port.ourCells()).map(({ address }) => address)).toEqual(['Sheet1!L1']);
+  });
 });

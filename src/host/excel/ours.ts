@@ -10,8 +10,14 @@ export function formulaIn(content: unknown, value: unknown): string | null {
 
 /** Every cell of the workbook with a formula of ours. */
 export async function ourCells(): Promise<OurCell[]> {
+  if (!Office.context.requirements.isSetSupported('ExcelApi', '1.9')) return oursAmong(usedRanges);
+  // Cells of a kind are not told of sheets that are protected: then all that is used is looked through.
+  return oursAmong(formulaRanges).catch(() => oursAmong(usedRanges));
+}
+
+async function oursAmong(find: (context: Excel.RequestContext) => Promise<Excel.Range[]>): Promise<OurCell[]> {
   return Excel.run(async (context) => {
-    const ranges = await formulaRanges(context);
+    const ranges = await find(context);
     for (const range of ranges) range.load('address, formulas, values');
     await context.sync();
     return ranges.flatMap((range) => {
@@ -30,17 +36,20 @@ export async function ourCells(): Promise<OurCell[]> {
   });
 }
 
-/** Where there are formulas: only those cells where Excel can tell them (ExcelApi 1.9), else all that is used. */
-async function formulaRanges(context: Excel.RequestContext): Promise<Excel.Range[]> {
+/** All that is used, sheet by sheet. */
+async function usedRanges(context: Excel.RequestContext): Promise<Excel.Range[]> {
   const { worksheets } = context.workbook;
   worksheets.load('items/name');
   await context.sync();
-  if (!Office.context.requirements.isSetSupported('ExcelApi', '1.9')) {
-    const used = worksheets.items.map((sheet) => sheet.getUsedRangeOrNullObject().load('isNullObject'));
-    await context.sync();
-    return used.filter(({ isNullObject }) => !isNullObject);
-  }
-  const found = worksheets.items.map((sheet) => sheet.getRange().getSpecialCellsOrNullObject(Excel.SpecialCellType.formulas).load('isNullObject'));
+  const used = worksheets.items.map((sheet) => sheet.getUsedRangeOrNullObject().load('isNullObject'));
+  await context.sync();
+  return used.filter(({ isNullObject }) => !isNullObject);
+}
+
+/** Only the cells that hold formulas. */
+async function formulaRanges(context: Excel.RequestContext): Promise<Excel.Range[]> {
+  const used = await usedRanges(context);
+  const found = used.map((range) => range.getSpecialCellsOrNullObject(Excel.SpecialCellType.formulas).load('isNullObject'));
   await context.sync();
   const areas = found.filter(({ isNullObject }) => !isNullObject).map((range) => range.areas.load('items/address'));
   await context.sync();
