@@ -2,7 +2,8 @@ import { CAUTION } from '../functions/caution';
 import { proofWords } from '../functions/proofWords';
 import { FUNCTIONS } from '../functions/registry';
 import type { Solved } from '../functions/solved';
-import type { DraftCell, SheetDraft } from '../host/port';
+import { columnLetters } from '../host/address';
+import { ALARM, type DraftCell, type SheetDraft } from '../host/port';
 import { inLines } from './lines';
 import { labelsOf } from './checkTables';
 import { checkSheet, PLAN_NAMES, type CheckSheet } from './handOverCheck';
@@ -24,7 +25,7 @@ export function handOverSheets(solved: Solved, day: string, prefix: string): She
   return [
     coverSheet(solved, day, check),
     planSheet(seats, prefix, check),
-    peopleSheet(solved),
+    peopleSheet(solved, prefix),
     listSheet(solved, 'UNCOVERED', 'Uncovered', [30, 8, 8, 9, 11, 90]),
     ...moves,
     check.sheet,
@@ -97,13 +98,32 @@ function planSheet(seats: readonly (readonly DraftCell[])[], prefix: string, { f
 /** Rows below the plan that are watched. */
 const BELOW = 300;
 
-function peopleSheet(solved: Solved): SheetDraft {
-  const kase = solved.case;
-  const { plan } = solved.outcome;
-  const own: string[][] = kase.people.map(() => []);
-  for (const { duty, person } of [...plan.seats].sort((a, b) => a.duty - b.duty)) own[person].push(kase.duties[duty].name);
+/** Everyone's duties, each row with a word where the plan by duty says otherwise by now. */
+function peopleSheet({ case: kase, outcome: { plan } }: Solved, prefix: string): SheetDraft {
+  const own: number[][] = kase.people.map(() => []);
+  for (const { duty, person } of [...plan.seats].sort((a, b) => a.duty - b.duty)) own[person].push(duty);
   const most = Math.max(1, ...own.map((duties) => duties.length));
-  const headings = ['Person', 'Seats', ...Array.from({ length: most }, (_, i) => `Duty ${i + 1}`)];
-  const rows = kase.people.map(({ name }, p): DraftCell[] => [name, plan.heldByPerson[p], ...own[p]]);
-  return { name: 'Plan by person', rows: [headings, ...rows], headingRows: [0], widths: [24, 7, ...Array.from({ length: most }, () => 26)] };
+  const numbered = Array.from({ length: most }, (_, i) => `Duty ${i + 1}`);
+  const rows = kase.people.map(({ name }, p): DraftCell[] => {
+    const duties = own[p].map((d) => kase.duties[d].name);
+    const blanks = Array.from({ length: most - duties.length }, () => null);
+    return [name, plan.heldByPerson[p], ...duties, ...blanks, { formula: changedFormula(prefix, p, own[p]) }];
+  });
+  const column = columnLetters(most + 2);
+  return {
+    name: 'Plan by person',
+    rows: [['Person', 'Seats', ...numbered, 'Check'], ...rows],
+    headingRows: [0],
+    widths: [24, 7, ...numbered.map(() => 26), 40],
+    alarms: [`${column}2:${column}${Math.max(1, kase.people.length) + 1}`],
+  };
+}
+
+/** Says so where someone's duties are others than these, by the sums of their numbers and of the squares of these. */
+function changedFormula(prefix: string, person: number, duties: readonly number[]): string {
+  const sum = duties.reduce((total, d) => total + d + 1, 0);
+  const squares = duties.reduce((total, d) => total + (d + 1) ** 2, 0);
+  const [held, isTheirs] = [`${prefix}RowDuty`, `(${prefix}RowPerson=${person + 1})`];
+  const isSame = `AND(SUMPRODUCT(${isTheirs}*${held})=${sum},SUMPRODUCT(${isTheirs}*${held}*${held})=${squares})`;
+  return `=IFERROR(IF(${isSame},"","${ALARM}: changed since, see the plan by duty"),"${ALARM}: cannot be calculated")`;
 }

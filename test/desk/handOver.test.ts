@@ -105,9 +105,9 @@ describe('handing over', () => {
     for (const sheet of ['Plan by duty', 'Plan by person', 'Uncovered', 'Moves']) {
       const sheetId = getters.getSheetIdByName(sheet)!;
       const formulas = getters.getCells(sheetId).filter(({ isFormula }) => isFormula);
-      // Beside the plan, a column says what the check finds in each row.
+      // Beside the plans, a column says what the check finds in each row.
       const places = new Set(formulas.map(({ id }) => getters.getCellPosition(id).col));
-      expect([...places]).toEqual(sheet === 'Plan by duty' ? [6] : []);
+      expect([...places]).toEqual(sheet === 'Plan by duty' ? [6] : sheet === 'Plan by person' ? [4] : []);
     }
   });
 
@@ -161,6 +161,24 @@ describe('handing over', () => {
     expect(at('Plan by duty', 4, 0)).toBe(second);
     expect(fourth).not.toBe(second);
     expect([1, 2, 3, 4].map((row) => at('Plan by duty', row, 6))).toEqual(['', '', '', 'Wrong: may not take it']);
+  });
+
+  it('says of whom the plan by person is out of date, also where the change is as good', async () => {
+    const ranges: Range[] = [
+      [['Duty', 'Person'], ['Desk', 'Ann'], ['Desk', 'Ben'], ['Door', 'Ann'], ['Door', 'Ben'], ['Hall', 'Cid']],
+      [['Person', 'Maximum'], ['Ann', 1], ['Ben', 1], ['Cid', 1]],
+    ];
+    await handOver(ranges);
+    const words = (): unknown[] => [1, 2, 3].map((row) => at('Plan by person', row, 3));
+    expect(words()).toEqual(['', '', '']);
+    const [first, second] = [1, 2].map((row) => String(at('Plan by duty', row, 1)));
+    type('B2', second);
+    type('B3', first);
+    expect(verdict()).toMatch(/^All is well/u);
+    expect(words()).toEqual(['Wrong: changed since, see the plan by duty', 'Wrong: changed since, see the plan by duty', '']);
+    type('B2', first);
+    type('B3', second);
+    expect(words()).toEqual(['', '', '']);
   });
 
   it('has a verdict of its own for every handing over', async () => {
