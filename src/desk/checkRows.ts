@@ -8,7 +8,10 @@ export interface Check {
   readonly formula: string;
 }
 
-/** What a row of the plan can be found guilty of: as its row says it, and as the list of the check does. */
+/**
+ * What a row of the plan can be found guilty of: as its row says it, and as the list of the check does;
+ * null where the list counts people or duties instead of rows.
+ */
 const ROW_FAULTS = {
   unread: ['cannot be read', 'Rows that cannot be read'],
   duty: ['no such duty', 'Rows with a duty that is none of the case'],
@@ -18,6 +21,8 @@ const ROW_FAULTS = {
   barred: ['barred', 'Seats that a Barred rule forbids'],
   away: ['away then', 'Seats of people who are away'],
   twice: ['given twice', 'Seats given twice to one person'],
+  maximum: ['over the maximum', null],
+  need: ['more people than needed', null],
   limit: ['over a limit', 'Seats of people over the limit of a slot or group'],
   time: ['too close in time', 'Seats too close in time to another of the same person'],
 } as const;
@@ -115,6 +120,8 @@ function faultFormula(over: readonly string[], close: string | null): string {
     [`${STANDING}="fixed"`, '""'],
     ...(over.length === 0 ? [] : [[`${over.join('+')}>0`, said('limit')] satisfies [string, string]]),
     ...(close === null ? [] : [[close, said('time')] satisfies [string, string]]),
+    [`INDEX(PersonHeld,${PERSON})>MAX(INDEX(PersonMaximum,${PERSON}),INDEX(PersonFixed,${PERSON}))`, said('maximum')],
+    [`INDEX(DutyHeld,${DUTY})>MAX(INDEX(DutyNeed,${DUTY}),INDEX(DutyFixed,${DUTY}))`, said('need')],
   ];
   return `=IFERROR(${tests.reduceRight((rest, [test, answer]) => `IF(${test},${answer},${rest})`, '""')},${said('unread')})`;
 }
@@ -124,9 +131,11 @@ function faultFormula(over: readonly string[], close: string | null): string {
  * that none makes up for another.
  */
 export function planChecks({ clashes, together, duties, people }: Case, membership: Membership, count: number, missed: number): Check[] {
-  const rowFaults = (Object.keys(ROW_FAULTS) as (keyof typeof ROW_FAULTS)[])
-    .filter((fault) => (fault !== 'limit' || membership.most > 0) && (fault !== 'time' || duties.some(({ times }) => times.length > 0)))
-    .map((fault) => ({ fault: ROW_FAULTS[fault][1], formula: `=COUNTIFS(RowFault,${said(fault)})` }));
+  const isAsked = { limit: membership.most > 0, time: duties.some(({ times }) => times.length > 0) } as Record<string, boolean | undefined>;
+  const rowFaults = (Object.keys(ROW_FAULTS) as (keyof typeof ROW_FAULTS)[]).flatMap((one): Check[] => {
+    const [, fault] = ROW_FAULTS[one];
+    return fault === null || isAsked[one] === false ? [] : [{ fault, formula: `=COUNTIFS(RowFault,${said(one)})` }];
+  });
   const below = 'SUMPRODUCT((PersonHeld<PersonMinimum)*(PersonMinimum-PersonHeld))';
   return [
     ...rowFaults,

@@ -160,7 +160,7 @@ describe('handing over', () => {
     type('B5', 'Cy');
     expect(at('Plan by duty', 4, 0)).toBe(second);
     expect(fourth).not.toBe(second);
-    expect([1, 2, 3, 4].map((row) => at('Plan by duty', row, 6))).toEqual(['', '', '', 'Wrong: may not take it']);
+    expect([1, 2, 3, 4].map((row) => at('Plan by duty', row, 6))).toEqual(['Wrong: over the maximum', '', '', 'Wrong: may not take it']);
   });
 
   it('says of whom the plan by person is out of date, also where the change is as good', async () => {
@@ -203,6 +203,21 @@ describe('handing over', () => {
     type('B3', 'Ada');
     type('B5', 'Ada');
     expect(await faults()).toMatchObject({ 'Seats of people over the limit of a slot or group': 2 });
+  });
+
+  it('says on the rows who is over the maximum, and where there are more people than needed', async () => {
+    const ranges: Range[] = [
+      [['Duty', 'Person'], ['Desk', 'Ann'], ['Door', 'Ann'], ['Door', 'Ben'], ['Desk', 'Ben']],
+      [['Person', 'Maximum'], ['Ann', 1], ['Ben', 1]],
+    ];
+    await handOver(ranges);
+    const [first] = [1, 2].map((row) => String(at('Plan by duty', row, 1)));
+    type('B3', first);
+    expect([1, 2].map((row) => at('Plan by duty', row, 6))).toEqual(['Wrong: over the maximum', 'Wrong: over the maximum']);
+    await handOver(ranges);
+    type('A3', String(at('Plan by duty', 1, 0)));
+    expect([1, 2].map((row) => at('Plan by duty', row, 6))).toEqual(['Wrong: more people than needed', 'Wrong: more people than needed']);
+    expect(verdict()).toMatch(/^Wrong/u);
   });
 
   it('leaves a change that is as good in peace', async () => {
